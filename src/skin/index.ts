@@ -1,0 +1,169 @@
+/**
+ * The skin of a solid: what can be touched from outside, as panels and creases.
+ */
+import { noProgress, type Progress } from '../errors'
+import { distance, dot, norm, type Vec3 } from '../geometry/vec3'
+import type { FillRule, Solid } from '../solids/types'
+import { type Arrangement, arrange } from './arrangement'
+import { insideJoins, outsideJoins, pairContacts } from './creases'
+import { type FilledFace, fillFace } from './filled-face'
+import { findOutside } from './outside'
+import { collectPanels, type RawPanel } from './panels'
+import { areaVector, carriedFaces, findPlanes, frameOf } from './planes'
+import { findStretches } from './stretches'
+import { catalogueTolerance, type Tolerance } from './tolerance'
+import type { LineContact, Skin, SkinCrease, SkinPanel } from './types'
+
+export type { LineContact, Skin, SkinCrease, SkinPanel } from './types'
+export { validateSkin } from './validate'
+
+/**
+ * Computes the skin: the boundary of the unbounded component of space minus the union of all filled faces.
+ * Lengths in unit edges. Deterministic; cost is governed by the face planes that differ under `solid.rotations`.
+ *
+ * @param fill `nonzero`: star polygons are filled stars; `evenodd`: star centres are open
+ * @throws BrokenPromise when the tolerance gap is not kept, or the surface does not close
+ * @throws Cancelled out of `progress`
+ */
+export const computeSkin = (
+  solid: Solid,
+  fill: FillRule = 'nonzero',
+  progress: Progress = noProgress,
+  tolerance: Tolerance = catalogueTolerance,
+): Skin => {
+  const set = findPlanes(solid, tolerance)
+  const frames = set.planes.map(frameOf)
+  const faces: FilledFace[] = solid.faces.map((_, i) => {
+    const plane = set.planeOfFace[i]!
+    return fillFace(solid, i, plane, frames[plane]!, fill)
+  })
+  const arrangements = new Map<number, Arrangement>()
+  set.representatives.forEach((r, i) => {
+    progress('skin', (0.6 * i) / set.representatives.length)
+    const own = faces.filter((f) => f.plane === r)
+    const others = faces.filter((f) => f.plane !== r)
+    arrangements.set(r, arrange(set.planes[r]!, frames[r]!, own, others, tolerance))
+  })
+  progress('skin', 0.6)
+  const sides = findOutside(set, arrangements, faces)
+  progress('skin', 0.8)
+  const kinds = solid.faces.map((f) => f.kind)
+  const { panels: raw, points } = collectPanels(
+    set,
+    arrangements,
+    sides,
+    kinds,
+    carriedFaces(solid, set, tolerance),
+    tolerance,
+  )
+  progress('skin', 0.9)
+  return assemble(solid, fill, raw, points)
+}
+
+const assemble = (solid: Solid, fill: FillRule, raw: readonly RawPanel[], points: readonly Vec3[]): Skin => {
+  const { stretches, stretchOf } = findStretches(raw, points)
+  const lengths = stretches.map((s) => distance(points[s.from]!, points[s.to]!))
+  const pairing = pairContacts(stretches, raw.length, lengths)
+
+  const creases: SkinCrease[] = []
+  const contacts: LineContact[] = []
+  const creaseOfBlade = new Map<string, number>()
+  stretches.forEach((s, i) => {
+    const line = s.blades.length > 2
+    const across = pairing.across[i]!
+    for (const { blades, innerAngle } of across || !line ? outsideJoins(s) : insideJoins(s)) {
+      const id = creases.length
+      creases.push({
+        id,
+        panels: [blades[0].panel, blades[1].panel],
+        ends: [s.from, s.to],
+        innerAngle,
+        contact: line ? 'line' : 'surface',
+        stretch: line ? contacts.length : -1,
+        length: lengths[i]!,
+      })
+      for (const b of blades) creaseOfBlade.set(`${b.panel} ${i} ${b.aligned ? 0 : 1}`, id)
+    }
+    if (line)
+      contacts.push({
+        ends: [s.from, s.to],
+        length: lengths[i]!,
+        pairing: across ? 'outside' : 'inside',
+        panels: s.blades.map((b) => b.panel),
+        bodies: [...new Set(s.blades.map((b) => pairing.bodyOf[b.panel]!))].sort((a, b) => a - b),
+      })
+  })
+
+  // Ring vertices in the middle of a stretch go; what is left is one ring edge a crease.
+  const used = new Map<number, number>()
+  const renumber = (v: number): number => {
+    let id = used.get(v)
+    if (id === undefined) used.set(v, (id = used.size))
+    return id
+  }
+  const panels = raw.map((panel, id): SkinPanel => {
+    const rings: number[][] = []
+    const ringCreases: number[][] = []
+    panel.rings.forEach((ring, r) => {
+      const list = stretchOf[id]![r]!
+      const corners: number[] = []
+      const owners: number[] = []
+      ring.forEach((v, e) => {
+        const before = list[(e + list.length - 1) % list.length]!
+        const s = list[e]!
+        if (s === before) return
+        corners.push(renumber(v))
+        const aligned = dot(
+          diff(points[ring[(e + 1) % ring.length]!]!, points[v]!),
+          diff(points[stretches[s]!.to]!, points[stretches[s]!.from]!),
+        )
+        owners.push(creaseOfBlade.get(`${id} ${s} ${aligned > 0 ? 0 : 1}`)!)
+      })
+      rings.push(corners)
+      ringCreases.push(owners)
+    })
+    const area = norm(ringsArea(panel.rings, points))
+    return {
+      id,
+      normal: panel.normal,
+      rings,
+      creases: ringCreases,
+      faces: panel.faces,
+      kind: panel.kind,
+      orbit: panel.orbit,
+      area,
+      body: pairing.bodyOf[id]!,
+    }
+  })
+  const kept: Vec3[] = []
+  for (const [v, id] of used) kept[id] = points[v]!
+  const endsOf = ([a, b]: readonly [number, number]): [number, number] => [renumber(a), renumber(b)]
+  const skin: Skin = {
+    solid: solid.id,
+    hand: solid.hand,
+    fill,
+    points: kept,
+    panels,
+    creases: creases.map((c) => ({ ...c, ends: endsOf(c.ends) })),
+    contacts: contacts.map((c) => ({ ...c, ends: endsOf(c.ends) })),
+    bodies: pairing.bodies,
+    parts: pairing.parts,
+    lineContactLength: contacts.reduce((sum, c) => sum + c.length, 0),
+    area: panels.reduce((sum, p) => sum + p.area, 0),
+    volume: panels.reduce((sum, p) => sum + (dot(p.normal, kept[p.rings[0]![0]!]!) * p.area) / 3, 0),
+  }
+  return skin
+}
+
+const diff = (a: Vec3, b: Vec3): Vec3 => [a[0] - b[0], a[1] - b[1], a[2] - b[2]]
+
+const ringsArea = (rings: readonly (readonly number[])[], points: readonly Vec3[]): Vec3 => {
+  const sum: [number, number, number] = [0, 0, 0]
+  for (const ring of rings) {
+    const a = areaVector(ring.map((i) => points[i]!))
+    sum[0] += a[0]
+    sum[1] += a[1]
+    sum[2] += a[2]
+  }
+  return sum
+}
