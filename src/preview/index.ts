@@ -1,0 +1,10 @@
+export type {
+  Lit,
+  Pick,
+  Preview,
+  PreviewOptions,
+  PreviewTheme,
+  SceneItem,
+  SceneOptions,
+  SeamLine,
+} from './types'
