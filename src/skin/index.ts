@@ -7,6 +7,7 @@ import type { FillRule, Solid } from '../solids/types'
 import { type Arrangement, arrange } from './arrangement'
 import { insideJoins, outsideJoins, pairContacts } from './creases'
 import { type FilledFace, fillFace } from './filled-face'
+import { neighbourFinder } from './neighbours'
 import { findOutside } from './outside'
 import { collectPanels, type RawPanel } from './panels'
 import { areaVector, carriedFaces, findPlanes, frameOf } from './planes'
@@ -37,12 +38,13 @@ export const computeSkin = (
     const plane = set.planeOfFace[i]!
     return fillFace(solid, i, plane, frames[plane]!, fill)
   })
+  const neighbours = neighbourFinder(faces, 2 * tolerance.on)
+  const ownFaces = set.planes.map((plane) => plane.faces.map((f) => faces[f]!))
   const arrangements = new Map<number, Arrangement>()
   set.representatives.forEach((r, i) => {
     progress('skin', (0.6 * i) / set.representatives.length)
-    const own = faces.filter((f) => f.plane === r)
-    const others = faces.filter((f) => f.plane !== r)
-    arrangements.set(r, arrange(set.planes[r]!, frames[r]!, own, others, tolerance))
+    const own = ownFaces[r]!
+    arrangements.set(r, arrange(set.planes[r]!, frames[r]!, own, neighbours(own), tolerance))
   })
   progress('skin', 0.6)
   const sides = findOutside(set, arrangements, faces)

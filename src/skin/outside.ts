@@ -96,7 +96,10 @@ const spokesAround = (
   home: Arrangement,
   e: number,
 ): Spoke[] => {
-  const { points, origin, frame } = home
+  const { points, origin, frame, cell, cells } = home
+  const covered = (h: number): boolean => cell[h]! >= 0 && cells[cell[h]!]!.faces.length > 0
+  // Edges in the open air of this plane are other planes' business.
+  if (!covered(2 * e) && !covered(2 * e + 1)) return []
   const a = toSpace(frame, points.x[origin[2 * e]!]!, points.y[origin[2 * e]!]!)
   const b = toSpace(frame, points.x[origin[2 * e + 1]!]!, points.y[origin[2 * e + 1]!]!)
   const d = normalize(sub(b, a))
