@@ -6,8 +6,8 @@
 import { BrokenPromise } from '../errors'
 import { SnapGrid } from '../geometry/snap'
 import { type Vec2, windingNumber } from '../geometry/vec2'
-import type { Vec3 } from '../geometry/vec3'
-import { covers, cutByPlane, type FilledFace } from './filled-face'
+import { cross as cross3, distance, dot, type Vec3 } from '../geometry/vec3'
+import { covers, cutByPlane, type FilledFace, type PlaneCut } from './filled-face'
 import { type FacePlane, type Frame, toPlane } from './planes'
 import type { Tolerance } from './tolerance'
 
@@ -81,9 +81,27 @@ export const arrange = (
   }
   const touches: Vec2[] = []
   for (const face of own) for (const [a, b] of face.boundary) addSegment(a, b, plane.id)
+  // Only what lies in this plane's own faces matters; the rest would make cells of open air.
+  const ownCuts = new Map<number, PlaneCut>()
   for (const face of others) {
     const cut = cutByPlane(face, plane.normal, plane.offset, on)
-    for (const [a, b] of cut.segments) addSegment(a, b, face.plane)
+    if (cut.segments.length > 0) {
+      let mine = ownCuts.get(face.plane)
+      if (!mine) {
+        const { normal, origin } = face.frame
+        mine = mergeCuts(own.map((f) => cutByPlane(f, normal, dot(normal, origin), on)))
+        ownCuts.set(face.plane, mine)
+      }
+      const axis = cross3(plane.normal, face.frame.normal)
+      for (const segment of cut.segments)
+        for (const limit of mine.segments) {
+          const common = overlap(segment, limit, axis)
+          if (!common) continue
+          if (distance(common[0], common[1]) > tolerance.merge) addSegment(common[0], common[1], face.plane)
+          else touches.push(toPlane(frame, common[0]))
+        }
+      for (const p of mine.touches) touches.push(toPlane(frame, p))
+    }
     for (const p of cut.touches) touches.push(toPlane(frame, p))
   }
 
@@ -159,6 +177,21 @@ export const arrange = (
     crossers,
     halfEdge: (a, b) => edgeOf.get(key(a, b)) ?? -1,
   }
+}
+
+const mergeCuts = (cuts: readonly PlaneCut[]): PlaneCut => ({
+  segments: cuts.flatMap((c) => c.segments),
+  touches: cuts.flatMap((c) => c.touches),
+})
+
+/** What two segments on one line have in common (maybe a point), with `axis` along the line; null if nothing. */
+const overlap = (a: readonly [Vec3, Vec3], b: readonly [Vec3, Vec3], axis: Vec3): [Vec3, Vec3] | null => {
+  const [a0, a1] = dot(axis, a[0]) <= dot(axis, a[1]) ? a : [a[1], a[0]]
+  const [b0, b1] = dot(axis, b[0]) <= dot(axis, b[1]) ? b : [b[1], b[0]]
+  const from = dot(axis, a0) >= dot(axis, b0) ? a0 : b0
+  const to = dot(axis, a1) <= dot(axis, b1) ? a1 : b1
+  const length = dot(axis, to) - dot(axis, from)
+  return length >= 0 ? [from, to] : -length <= 1e-9 * Math.sqrt(dot(axis, axis)) ? [from, from] : null
 }
 
 const across = (l: Line, x: number, y: number): number => l.dx * (y - l.py) - l.dy * (x - l.px)

@@ -21,7 +21,9 @@ export const randomDirection = (random: Random): [number, number, number] => {
 }
 
 /** A rotation matrix, uniform (a random unit quaternion). */
-export const randomRotation = (random: Random): [[number, number, number], [number, number, number], [number, number, number]] => {
+export const randomRotation = (
+  random: Random,
+): [[number, number, number], [number, number, number], [number, number, number]] => {
   const u = random()
   const a = 2 * Math.PI * random()
   const b = 2 * Math.PI * random()
