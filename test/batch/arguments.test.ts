@@ -1,0 +1,109 @@
+import { describe, expect, test } from 'vitest'
+import { readCommand } from '../../src/batch/arguments'
+import { InputError } from '../../src/errors'
+
+const words = (line: string): string[] => line.split(' ').filter((word) => word !== '')
+
+describe('the command line', () => {
+  test('list and skin', () => {
+    expect(readCommand(['list', '--json'])).toEqual({ name: 'list', json: true })
+    expect(readCommand(['skin', 'cube'])).toEqual({ name: 'skin', id: 'cube', fill: 'nonzero', json: false })
+    expect(readCommand(words('skin --all --fill evenodd --json'))).toEqual({
+      name: 'skin',
+      id: 'all',
+      fill: 'evenodd',
+      json: true,
+    })
+  })
+
+  test('plan with nothing but what it must have', () => {
+    expect(readCommand(words('plan cube --height 250 --out x'))).toEqual({
+      name: 'plan',
+      id: 'cube',
+      heightMm: 250,
+      paper: 'a4',
+      fill: 'nonzero',
+      hand: 'left',
+      side: 'outside',
+      colours: 'one',
+      out: 'x',
+    })
+  })
+
+  test('plan with all options, in any order and with equals signs', () => {
+    const line =
+      '--out=a --side inside plan cube --hand right --height=99.5 --paper letter --fill evenodd --colours kind'
+    const [first, second, third, ...rest] = words(line)
+    expect(readCommand(['plan', 'cube', first!, second!, third!, ...rest.slice(2)])).toMatchObject({
+      heightMm: 99.5,
+      paper: 'letter',
+      fill: 'evenodd',
+      hand: 'right',
+      side: 'inside',
+      colours: 'kind',
+      out: 'a',
+    })
+  })
+
+  test.each([['help'], ['--help'], ['plan --help'], ['skin --all --help']])('%s is a request for help', (line) => {
+    expect(readCommand(words(line))).toEqual({ name: 'help' })
+  })
+
+  test.each([
+    ['10', 10],
+    ['2000', 2000],
+    ['250.', 250],
+    ['1999.999', 1999.999],
+  ])('the height %s is taken', (told, height) => {
+    expect(readCommand(['plan', 'cube', '--out', 'x', '--height', told])).toMatchObject({ heightMm: height })
+  })
+
+  const wrong: [line: string, message: RegExp][] = [
+    ['', /^The command is missing; say list, skin or plan/],
+    ['unfold cube', /^There is no command unfold; say list, skin or plan/],
+    ['--json', /^There is no command --json/],
+    ['list cube', /^list takes no solid; leave cube out/],
+    ['list --fill nonzero', /^There is no option --fill; list takes --json\.$/],
+    ['list -j', /^There is no option -j; list takes --json\.$/],
+    ['list --json=yes', /^--json takes no value/],
+    ['skin', /^Say which solid: skin ID or skin --all/],
+    ['skin cube --all', /^Say either cube or --all/],
+    ['skin cube tetrahedron', /^One solid at a time; tetrahedron is too much/],
+    ['skin cube --fill odd', /^--fill is nonzero or evenodd, not odd\.$/],
+    ['skin cube --fill', /^--fill needs a value: --fill nonzero or/],
+    ['plan --height 250 --out x', /^Say which solid: plan ID --height/],
+    ['plan cube --out x', /^The height is missing; say a number of millimetres from 10 to 2000/],
+    ['plan cube --out x --height', /^--height needs a value: --height 250/],
+    [
+      'plan cube --out x --height tall',
+      /^The height tall is not a number; say a number of millimetres from 10 to 2000/,
+    ],
+    ['plan cube --out x --height 250mm', /^The height 250mm is not a number/],
+    ['plan cube --out x --height 0xff', /^The height 0xff is not a number/],
+    ['plan cube --out x --height Infinity', /^The height Infinity is not a number/],
+    ['plan cube --out x --height 9.99', /^The height 9.99 is out of range; say .* from 10 to 2000/],
+    ['plan cube --out x --height 2000.01', /^The height 2000.01 is out of range/],
+    ['plan cube --out x --height=-250', /^The height -250 is out of range/],
+    ['plan cube --out x --height -250', /^--height needs a value/],
+    ['plan cube --height 250', /^Say where to write .* --out my-plan/],
+    ['plan cube --height 250 --out=', /^Say where to write/],
+    ['plan cube --height 250 --out x --paper a5', /^--paper is a4 or letter, not a5/],
+    ['plan cube --height 250 --out x --hand both', /^--hand is left or right, not both/],
+    ['plan cube --height 250 --out x --side top', /^--side is outside or inside, not top/],
+    ['plan cube --height 250 --out x --scale 2', /^There is no option --scale; plan takes --height, --out, --paper/],
+  ]
+  test.each(wrong)('"%s" is refused in one line that says what would be right', (line, message) => {
+    const error = (() => {
+      try {
+        readCommand(words(line))
+      } catch (thrown) {
+        return thrown
+      }
+      return undefined
+    })()
+    expect(error).toBeInstanceOf(InputError)
+    const said = (error as InputError).message
+    expect(said).toMatch(message)
+    expect(said).not.toContain('\n')
+  })
+})
