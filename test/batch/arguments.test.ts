@@ -32,9 +32,8 @@ describe('the command line', () => {
 
   test('plan with all options, in any order and with equals signs', () => {
     const line =
-      '--out=a --side inside plan cube --hand right --height=99.5 --paper letter --fill evenodd --colours kind'
-    const [first, second, third, ...rest] = words(line)
-    expect(readCommand(['plan', 'cube', first!, second!, third!, ...rest.slice(2)])).toMatchObject({
+      'plan --out=a --side inside cube --hand right --height=99.5 --paper letter --fill evenodd --colours kind'
+    expect(readCommand(words(line))).toMatchObject({
       heightMm: 99.5,
       paper: 'letter',
       fill: 'evenodd',
