@@ -9,5 +9,12 @@ export const backBias = -2e-5
 export const layerBias = -2e-6
 /** There are no more layers than stay clear of `backBias`. */
 export const layers = 8
-/** Lines stand out from the panels that they bound. */
-export const lineBias = 7e-4
+/**
+ * Lines stand out from the panels that they bound, and wider lines more, so that the half of a line that lies over its
+ * own tilted panel is not hidden by it.
+ *
+ * @param widthPx width of the line, CSS px
+ * @param focal `Camera.focal`: CSS px per unit of x / distance
+ */
+export const lineBias = (widthPx: number, focal: number): number =>
+  Math.min(0.04, ((0.5 * widthPx + 0.3) * 1.6) / focal)

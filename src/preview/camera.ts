@@ -168,9 +168,9 @@ export class Camera {
     return { origin: back([0, 0, this.distance]), direction: back(view) }
   }
 
-  /** Near and far plane, just outside the model's sphere. */
+  /** Near and far plane outside the model's sphere, with room for lines that stand out (see `bias.ts`). */
   get depthRange(): readonly [number, number] {
-    return [this.distance - 1.02 * this.spread, this.distance + 1.02 * this.spread]
+    return [this.distance - 1.25 * this.spread, this.distance + 1.05 * this.spread]
   }
 
   /** The same projection for clip space (x right, y up, −w…w): column-major 4 × 4, for centred, scaled model points. */

@@ -1,3 +1,6 @@
+export { filledRings } from './filled-rings'
+export type { Pixels } from './picture'
+export { type FacesLike, faceItems, paintThumbnail, renderThumbnail, type ThumbnailOptions } from './thumbnail'
 export type {
   Lit,
   Pick,
@@ -8,3 +11,4 @@ export type {
   SceneOptions,
   SeamLine,
 } from './types'
+export { createPreview } from './view'

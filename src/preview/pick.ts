@@ -11,7 +11,7 @@ import type { Stage } from './stage'
 export class Picker {
   private key = ''
   private vertices: ScreenVertices = { x: new Float64Array(0), y: new Float64Array(0), inverse: new Float64Array(0) }
-  private biases = new Float64Array(0)
+  private biases: Float64Array = new Float64Array(0)
 
   /** Index of the item nearest to the viewer at (x, y) in CSS px, or -1. Call after `stage.update()`. */
   itemAt(stage: Stage, camera: Camera, x: number, y: number): number {

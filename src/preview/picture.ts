@@ -7,7 +7,7 @@ import { backBias, layerBias, lineBias } from './bias'
 import type { Camera } from './camera'
 import { parseHex, type Rgb } from './colour'
 import { clearLayer, createLayer, drawLines, drawTriangles, type Layer, type ScreenVertices } from './raster'
-import { crowding, ghostAlpha, hatchPx, type LineSet, type Stage, tonesPerItem } from './stage'
+import { ghostAlpha, hatchPx, type LineSet, type Stage, tonesPerItem } from './stage'
 
 /** RGBA, not premultiplied, rows from the top: what `ImageData` takes. */
 export interface Pixels {
@@ -109,7 +109,7 @@ export class Picture {
       this.markBorders(borders, inks.length)
     }
 
-    const needed = 3 * tonesPerItem * stage.model.items.length
+    const needed = 4 * tonesPerItem * stage.model.items.length
     if (this.tones.length !== needed) this.tones = new Uint8Array(needed)
     stage.tones(camera.rotation, this.tones)
     if (this.pixels.length !== 4 * columns * rows) this.pixels = new Uint8ClampedArray(4 * columns * rows)
@@ -120,18 +120,15 @@ export class Picture {
   private drawSet(set: LineSet, mark: number, stage: Stage, camera: Camera, scale: number): Ink {
     const { style } = set
     const layer = style.depth === 'ghost' ? this.ghost : this.solid
-    const width = style.width * scale
     if (layer.depth.length > 0)
       drawLines(layer, this.width, this.height, projectAll(set.ends, camera, scale), {
         mark,
-        width: Math.max(1, width),
+        width: Math.max(1, style.width * scale),
         dash: style.dash * scale,
         hides: style.depth !== 'through',
-        bias: lineBias,
+        bias: lineBias(style.width, camera.focal),
       })
-    // A line that should be thinner than a sample is drawn weaker instead.
-    const crowd = style.thins ? crowding((stage.model.meanEdge * camera.focal) / camera.distance) : 1
-    return { colour: style.colour, alpha: style.alpha * Math.min(1, width) * crowd }
+    return { colour: style.colour, alpha: stage.lineAlpha(style, camera, scale) }
   }
 
   /** Lines where neighbouring samples show different planes, or ground and background. */
@@ -257,5 +254,5 @@ export class Picture {
 const toneAt = (code: number, hatched: Uint8Array, stripe: number): number => {
   const item = (code - 1) >> 1
   const side = (code - 1) & 1
-  return 3 * (tonesPerItem * item + side + (stripe === 1 && hatched[item] === 1 ? 2 : 0))
+  return 4 * (tonesPerItem * item + side + (stripe === 1 && hatched[item] === 1 ? 2 : 0))
 }

@@ -3,6 +3,7 @@
  * and one tone per item and side. All decisions about visibility, light and marks are taken here, once.
  */
 import { cross, type Mat3, scale, sub, type Vec3 } from '../geometry/vec3'
+import type { Camera } from './camera'
 import { darken, mix, parseHex, type Rgb } from './colour'
 import { brightness, insideOf } from './light'
 import { buildModel, type Model } from './model'
@@ -24,7 +25,7 @@ export interface LineStyle {
   readonly dash: number
   /** 'surface': hidden by what is in front; 'through': seen through the model; 'ghost': hidden by ghosts too. */
   readonly depth: 'surface' | 'through' | 'ghost'
-  /** Drawn weaker where edges crowd on the screen (see `crowding`). */
+  /** Drawn weaker where edges crowd on the screen (see `lineAlpha`). */
   readonly thins: boolean
 }
 
@@ -34,7 +35,7 @@ export interface LineSet {
   readonly ends: Float64Array
 }
 
-/** Tones per item: outside, inside, and the same two for the stripes of the hatch; RGB each. */
+/** Tones per item: outside, inside, and the same two for the stripes of the hatch; RGBA each. */
 export const tonesPerItem = 4
 /** Hatch: stripes at 45 degrees, this wide in CSS px across the diagonal step. */
 export const hatchPx = 4
@@ -198,10 +199,10 @@ export class Stage {
   }
 
   /**
-   * Tones for the present rotation, `tonesPerItem` × RGB per item. Kept apart from `update` because it alone changes
+   * Tones for the present rotation, `tonesPerItem` × RGBA per item. Kept apart from `update` because it alone changes
    * with every turn of the model.
    */
-  tones(rotation: Mat3, out = new Uint8Array(3 * tonesPerItem * this.model.items.length)): Uint8Array {
+  tones(rotation: Mat3, out = new Uint8Array(4 * tonesPerItem * this.model.items.length)): Uint8Array {
     const { items, colours, backs } = this.model
     items.forEach((item, i) => {
       const outside = colours[i]!
@@ -212,10 +213,11 @@ export class Stage {
       const tones = [darken(outside, lightOut), darken(inside, lightIn)]
       const stripes = accent ? tones.map((tone) => mix(tone, accent, 0.75)) : tones
       ;[...tones, ...stripes].forEach(([r, g, b], k) => {
-        const at = 3 * (tonesPerItem * i + k)
+        const at = 4 * (tonesPerItem * i + k)
         out[at] = r
         out[at + 1] = g
         out[at + 2] = b
+        out[at + 3] = 255
       })
     })
     return out
@@ -270,7 +272,7 @@ export class Stage {
         ends: this.gatherEdges(solid, (c) => !isFold(c)),
       },
       {
-        style: { width: 0.8, colour: ghost, alpha: 0.35, dash: 0, depth: 'ghost', thins: true },
+        style: { width: 0.8, colour: ghost, alpha: 0.5, dash: 0, depth: 'ghost', thins: true },
         ends: this.gatherEdges(
           (i) => this.isGhost(i),
           () => true,
@@ -313,6 +315,18 @@ export class Stage {
           .flatMap((seam) => seam.ends.flatMap((end) => [...this.place(end, seam.item)])),
       )
     return [...marked(gather(false), accent, casing, 4), ...marked(gather(true), accent, casing, 7)]
+  }
+
+  /**
+   * Opacity of a line: one that should be thinner than a pixel is drawn weaker instead, and edges are drawn weaker where
+   * they crowd on the screen.
+   *
+   * @param scale pixels (or samples) per CSS px
+   */
+  lineAlpha(style: LineStyle, camera: Camera, scale: number): number {
+    const meanEdgePx = (this.model.meanEdge * camera.focal) / camera.distance
+    const crowding = style.thins ? Math.min(1, Math.max(0.22, meanEdgePx / 16)) : 1
+    return style.alpha * Math.min(1, style.width * scale) * crowding
   }
 
   /** A point in the rings' units as it lies in the scene at the present explosion. */
@@ -374,6 +388,3 @@ const marked = (ends: Float64Array, accent: Rgb, casing: Rgb, width: number): Li
     { style: { ...line, width, alpha: 1 }, ends },
   ]
 }
-
-/** How strongly thin lines are drawn: full when edges are long on the screen, weaker when they crowd. */
-export const crowding = (meanEdgePx: number): number => Math.min(1, Math.max(0.22, meanEdgePx / 16))
