@@ -1,5 +1,5 @@
 /** Checks of a plan's nets: flat copies of the panels, held together by folds, without overlap, one cut line. */
-import { intersectionArea, polygons, regionArea, symmetricDifference, union } from '../geometry/clip'
+import { intersectionArea, regionArea, symmetricDifference, union } from '../geometry/clip'
 import { UnionFind } from '../geometry/union-find'
 import {
   distance2,
@@ -132,21 +132,17 @@ export const noOverlapInPiece = ({ plan }: PlanIndex): PlanCheck => {
   return verdict('no overlap in a piece', faults, 'panels lie side by side')
 }
 
-/** The cut line is the outer border of panels and tabs together. */
+/**
+ * The cut line goes round panels and tabs together, their holes aside. Where parts only touch it may run in and out of a
+ * slit without width; a pocket that touching parts enclose is outside it.
+ */
 export const outlinesAreCutLines = ({ plan }: PlanIndex): PlanCheck => {
   const faults: string[] = []
   for (const piece of plan.pieces) {
-    const parts = [...piece.panels.map(({ rings }) => rings[0]!), ...piece.tabs.map(({ outline }) => outline)]
-    // Parts that share an edge only to the last digit must not come apart along it.
-    const whole = polygons(union(parts))
-    const [first, ...others] = whole.map((rings) => rings[0]!).sort((a, b) => signedArea(b) - signedArea(a))
-    if (!first || others.some((ring) => signedArea(ring) > hair)) {
-      faults.push(`piece ${piece.label}: panels and tabs do not hang together`)
-      continue
-    }
+    const whole = union([...piece.panels.map(({ rings }) => rings[0]!), ...piece.tabs.map(({ outline }) => outline)])
     if (!(signedArea(piece.outline) > 0)) faults.push(`piece ${piece.label}: outline is not CCW`)
-    const off = regionArea(symmetricDifference([first], [piece.outline]))
-    if (!(off <= hair * perimeter(first))) faults.push(`piece ${piece.label}: outline is off by ${off} mm²`)
+    const off = regionArea(symmetricDifference(whole, [piece.outline]))
+    if (!(off <= hair * perimeter(piece.outline))) faults.push(`piece ${piece.label}: outline is off by ${off} mm²`)
   }
   return verdict('outlines are the cut lines', faults, `${plan.pieces.length} outlines`)
 }

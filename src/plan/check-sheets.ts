@@ -127,7 +127,7 @@ export const docketAgrees = ({ plan, creases, panels }: PlanIndex): PlanCheck =>
   say('card area', docket.cardAreaMm2, card, 1e-6 * card)
   const net =
     plan.panels.reduce((sum, { areaMm2 }) => sum + areaMm2, 0) +
-    plan.pieces.flatMap(({ tabs }) => tabs).reduce((sum, { outline }) => sum + signedArea(outline), 0)
+    plan.pieces.flatMap((piece) => piece.tabs).reduce((sum, { outline }) => sum + signedArea(outline), 0)
   say('net area', docket.netAreaMm2, net, 1e-6 * net)
   say('utilisation', docket.utilisation, net / card, 1e-6)
   const { total, ...kinds } = docket.hours
@@ -145,16 +145,19 @@ export const docketAgrees = ({ plan, creases, panels }: PlanIndex): PlanCheck =>
     1e-6,
   )
 
-  // The cut goes round every outline and every hole of a panel.
-  const holes = plan.pieces.flatMap((piece) => piece.panels.flatMap(({ rings }) => rings.slice(1)))
-  const cut = [...plan.pieces.map(({ outline }) => outline), ...holes].reduce((sum, ring) => sum + perimeter(ring), 0)
+  const lengthOf = (ids: readonly number[]): number =>
+    ids.reduce((sum, id) => sum + distance(...creases.get(id)!.ends), 0)
+  const tabs = plan.pieces.flatMap((piece) => piece.tabs.map(({ outline }) => outline))
+  const rings = plan.pieces.flatMap((piece) => piece.panels.flatMap((entry) => entry.rings))
+  const folds = lengthOf(plan.pieces.flatMap((piece) => piece.folds))
+  const roots = tabs.reduce((sum, outline) => sum + distance2(outline[0]!, outline[1]!), 0)
+  const round = (list: readonly Ring2[]): number => list.reduce((sum, ring) => sum + perimeter(ring), 0)
+  // All edges of panels and tabs are cut but the folds (an edge of two panels) and the roots (of a panel and a tab).
+  const cut = round(rings) + round(tabs) - 2 * folds - 2 * roots
   say('cut length', docket.cutMm, cut, 1e-6 * cut)
-  // Folds and the roots of tabs are scored; a fold of 180 degrees is no fold of the card.
-  const roots = plan.pieces.flatMap(({ tabs }) => tabs.map(({ outline }) => distance2(outline[0]!, outline[1]!)))
-  const folds = plan.pieces.flatMap((piece) => piece.folds.map((fold) => distance(...creases.get(fold)!.ends)))
-  const score = [...roots, ...folds].reduce((sum, length) => sum + length, 0)
-  say('score length', docket.scoreMm, score, 1e-6 * score)
-  const glue = seams.reduce((sum, { ends }) => sum + distance(...ends), 0)
+  // Folds and the roots of tabs are scored.
+  say('score length', docket.scoreMm, folds + roots, 1e-6 * (folds + roots))
+  const glue = lengthOf(seams.map(({ id }) => id))
   say('glue length', docket.glueMm, glue, 1e-6 * glue)
   if (!panels.has(docket.tightest.panel)) faults.push(`the tightest panel ${docket.tightest.panel} is not there`)
   return verdict('the docket agrees', faults, 'counts, areas, lengths and hours')
