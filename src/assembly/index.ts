@@ -1,0 +1,2 @@
+/** What is glued when. */
+export { type GluingOrder, type GluingStep, gluingOrder, renumber } from './order'
