@@ -92,7 +92,6 @@ export const filledRings = (cycle: readonly Vec3[], normal: Vec3, rule: FillRule
     let best: Step | undefined
     let bestTurn = Number.NEGATIVE_INFINITY
     for (const next of leaving.get(step.to) ?? []) {
-      if (next.used) continue
       const e = sub2(points[next.to]!, points[next.from]!)
       const turn = Math.atan2(cross2(d, e), d[0] * e[0] + d[1] * e[1])
       if (turn > bestTurn) {

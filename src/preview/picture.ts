@@ -182,7 +182,7 @@ export class Picture {
             if (code[at] !== firstCode || line[at] !== 0) plain = false
         if (plain) {
           if (firstCode === 0) {
-            pixels[out + 3] = 0
+            pixels.fill(0, out, out + 4)
           } else {
             const t = toneAt(firstCode, hatched, stripe)
             pixels[out] = tones[t]!

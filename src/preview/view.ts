@@ -69,11 +69,7 @@ class View implements Preview {
   private hovered: number | null = null
   private waiting: (() => void)[] = []
 
-  constructor(
-    host: HTMLElement,
-    options: PreviewOptions,
-    renderer: Renderer,
-  ) {
+  constructor(host: HTMLElement, options: PreviewOptions, renderer: Renderer) {
     const interactive = options.interactive ?? true
     this.camera = new Camera(options.direction)
     const { element } = this

@@ -1,0 +1,83 @@
+import { describe, expect, test } from 'vitest'
+import { Camera } from '../../src/preview/camera'
+import type { Pixels } from '../../src/preview/picture'
+import { faceItems, renderThumbnail } from '../../src/preview/thumbnail'
+import { castRay } from './ray-caster'
+import { cubeItems, greatDodecahedron, smallStellatedDodecahedron, twoTetrahedra } from './shapes'
+
+const colours = ['#d98c3f', '#4f81bd']
+const solids = { greatDodecahedron, smallStellatedDodecahedron, twoTetrahedra }
+
+const alphaAt = ({ width, data }: Pixels, x: number, y: number): number => data[4 * (y * width + x) + 3]!
+
+describe('thumbnails', () => {
+  test.each(Object.entries(solids))('%s covers what an independent ray caster meets', (_, solid) => {
+    const items = faceItems(solid, colours)
+    const size = 48
+    const picture = renderThumbnail(items, { size, samples: 1 })
+    expect([picture.width, picture.height, picture.data.length]).toEqual([size, size, 4 * size * size])
+    const camera = new Camera()
+    camera.resize(size, size)
+    // The models are centred at the origin already; rays come in units of the radius.
+    const radius = Math.hypot(...solid.vertices[0]!)
+    let met = 0
+    for (let y = 0; y < size; y++)
+      for (let x = 0; x < size; x++) {
+        const { origin, direction } = camera.ray(x + 0.5, y + 0.5)
+        const scaled = (v: readonly number[]): [number, number, number] => [
+          v[0]! * radius,
+          v[1]! * radius,
+          v[2]! * radius,
+        ]
+        const cast = castRay(items, { origin: scaled(origin), direction: scaled(direction) })
+        if (cast.doubtful) continue
+        expect({ x, y, alpha: alphaAt(picture, x, y) }).toEqual({ x, y, alpha: cast.nearest ? 255 : 0 })
+        if (cast.nearest) met++
+      }
+    expect(met).toBeGreaterThan(400)
+  })
+
+  test('the same input gives the same bytes, and no picture is changed by the next', () => {
+    const items = faceItems(greatDodecahedron, colours)
+    const first = renderThumbnail(items, { size: 40 })
+    const copy = first.data.slice()
+    renderThumbnail(cubeItems(), { size: 40 })
+    expect(first.data).toEqual(copy)
+    expect(renderThumbnail(items, { size: 40 }).data).toEqual(copy)
+  })
+
+  test('both colours of two tetrahedra are seen, and dark lines where they cut through each other', () => {
+    const { data } = renderThumbnail(faceItems(twoTetrahedra, ['#ff0000', '#0000ff']), { size: 120, samples: 3 })
+    let [red, blue, dark] = [0, 0, 0]
+    for (let i = 0; i < data.length; i += 4) {
+      if (data[i + 3]! < 255) continue
+      const [r, b] = [data[i]!, data[i + 2]!]
+      if (r > 140 && b < 10) red++
+      if (b > 140 && r < 10) blue++
+      if (r < 130 && b < 130) dark++
+    }
+    expect(red).toBeGreaterThan(500)
+    expect(blue).toBeGreaterThan(500)
+    expect(dark).toBeGreaterThan(50)
+  })
+
+  test('coplanar faces of two kinds do not flicker: the earlier kind wins', () => {
+    const [square] = cubeItems().slice(4)
+    const large = { ...square!, id: 1, kind: 'a', colour: '#ff0000' }
+    const small = {
+      ...square!,
+      id: 2,
+      kind: 'b',
+      colour: '#0000ff',
+      rings: [square!.rings[0]!.map(([x, y, z]) => [0.9 * x + 0.02, 0.8 * y, z] as const)],
+    }
+    const blueIn = (items: (typeof large)[]): number => {
+      const { data } = renderThumbnail(items, { size: 100, samples: 1, direction: [0.2, 0.3, 0.9] })
+      let blue = 0
+      for (let i = 0; i < data.length; i += 4) if (data[i + 2]! > data[i]! && data[i + 3]! > 0) blue++
+      return blue
+    }
+    expect(blueIn([large, small])).toBe(0)
+    expect(blueIn([small, large])).toBeGreaterThan(2000)
+  })
+})
