@@ -1,5 +1,5 @@
 /** Checks of a plan's seams and tabs: roots, room in the flat net, room behind the receiving panel, pairs, labels. */
-import { differenceArea, intersectionArea } from '../geometry/clip'
+import { differenceArea, intersectionArea, offset } from '../geometry/clip'
 import { cross2, distance2, dot2, left2, normalize2, type Ring2, signedArea, sub2, type Vec2 } from '../geometry/vec2'
 import { layingMotion } from './check-pieces'
 import { boxOf, meetingPairs, type PlanIndex, perimeter, verdict } from './check-support'
@@ -46,22 +46,39 @@ export const tabsHangOnSeams = (index: PlanIndex): PlanCheck => {
   return verdict('tabs hang on their seams', faults, `${index.plan.pieces.reduce((n, p) => n + p.tabs.length, 0)} tabs`)
 }
 
+/** mm that a knife needs between a tab and what is not its own panel. */
+const leastGap = 0.1
+
 export const tabsClearInFlat = ({ plan }: PlanIndex): PlanCheck => {
   const faults: string[] = []
   for (const piece of plan.pieces) {
-    const parts: { name: string; rings: readonly Ring2[]; tab: boolean }[] = [
-      ...piece.panels.map(({ panel, rings }) => ({ name: `panel ${panel}`, rings, tab: false })),
-      ...piece.tabs.map(({ crease, outline }) => ({ name: `tab on crease ${crease}`, rings: [outline], tab: true })),
+    // Tabs are grown by the gap, except towards their own panel, which they touch along the root.
+    const parts = [
+      ...piece.tabs.map(({ crease, panel, outline }) => ({
+        name: `tab on crease ${crease}`,
+        carrier: panel,
+        own: undefined,
+        rings: [outline] as readonly Ring2[],
+        grown: offset([outline], leastGap, { join: 'miter' }),
+      })),
+      ...piece.panels.map(({ panel, rings }) => ({
+        name: `panel ${panel}`,
+        carrier: undefined,
+        own: panel,
+        rings: rings as readonly Ring2[],
+        grown: rings as readonly Ring2[],
+      })),
     ]
-    for (const [i, j] of meetingPairs(parts.map(({ rings }) => boxOf(rings)))) {
-      const [a, b] = [parts[i]!, parts[j]!]
-      if (!a.tab && !b.tab) continue
-      const area = intersectionArea(a.rings, b.rings)
-      const shorter = Math.min(perimeter(a.rings[0]!), perimeter(b.rings[0]!))
-      if (area > hair * shorter) faults.push(`piece ${piece.label}: ${a.name} and ${b.name} overlap by ${area} mm²`)
+    for (const [i, j] of meetingPairs(parts.map(({ grown }) => boxOf(grown)))) {
+      // Tabs come first in the list, so the first of a pair is one unless both are panels.
+      const [tab, other] = [parts[i]!, parts[j]!]
+      if (tab.carrier === undefined) continue
+      const area = intersectionArea(tab.carrier === other.own ? tab.rings : tab.grown, other.rings)
+      if (area > hair * Math.min(perimeter(tab.rings[0]!), perimeter(other.rings[0]!)))
+        faults.push(`piece ${piece.label}: ${tab.name} lies on ${other.name} or too near, by ${area} mm²`)
     }
   }
-  return verdict('tabs are clear in the flat', faults, 'no tab on a panel or another tab')
+  return verdict('tabs are clear in the flat', faults, `${leastGap} mm from other panels and tabs`)
 }
 
 /** Where a tab comes to lie on the receiving panel, in the plane of that panel's piece: mirrored across the seam. */

@@ -187,6 +187,20 @@ export const breaks: readonly Break[] = [
   ],
   [
     'tabs are clear in the flat',
+    'a tab leaves no room for the knife beside the next one',
+    (plan) => {
+      const piece = plan.pieces.find(({ tabs }) => tabs.length > 1)!
+      // A sliver of the other tab's neighbourhood: its own outline, moved just off it.
+      const [a, b] = piece.tabs
+      const [p, q] = [b!.outline[2]!, b!.outline[3]!]
+      const length = Math.hypot(q[0] - p[0], q[1] - p[1])
+      const [nx, ny] = [(q[1] - p[1]) / length, -(q[0] - p[0]) / length]
+      const at = ([x, y]: Point2, off: number): Point2 => [x + off * nx, y + off * ny]
+      a!.outline = [at(p, 0.05), at(p, 0.5), at(q, 0.5), at(q, 0.05)]
+    },
+  ],
+  [
+    'tabs are clear in the flat',
     'two tabs lie on each other',
     (plan) => {
       const piece = plan.pieces.find(({ tabs }) => tabs.length > 1)!
