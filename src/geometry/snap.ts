@@ -6,12 +6,14 @@
 import { BrokenPromise } from '../errors'
 
 export class SnapGrid {
-  /** Coordinates of point i: x[i], y[i], z[i]. */
-  readonly x: number[] = []
-  readonly y: number[] = []
-  readonly z: number[] = []
-  private readonly head = new Map<number, number>()
-  private readonly next: number[] = []
+  /** Coordinates of point i < size: x[i], y[i], z[i]. Typed arrays, since a mesh has one grid per face plane. */
+  x = new Float64Array(8)
+  y = new Float64Array(8)
+  z = new Float64Array(8)
+  size = 0
+  /** Hash table of chains: first point of each bucket, then the next in its chain, −1 at the end. */
+  private head = new Int32Array(16).fill(-1)
+  private next = new Int32Array(8)
   /** Greatest distance seen between points taken as equal, and least between points told apart (within one grid cell). */
   widestMerge = 0
   closestPair = Number.POSITIVE_INFINITY
@@ -23,10 +25,6 @@ export class SnapGrid {
     readonly cell: number,
   ) {}
 
-  get size(): number {
-    return this.x.length
-  }
-
   /** The number of the point at (x, y, z), or -1. */
   find(x: number, y: number, z: number): number {
     const { cell, gap } = this
@@ -37,7 +35,7 @@ export class SnapGrid {
     for (let i = Math.floor((x - reach) / cell); i <= x1; i++)
       for (let j = Math.floor((y - reach) / cell); j <= y1; j++)
         for (let k = Math.floor((z - reach) / cell); k <= z1; k++) {
-          let p = this.head.get(hash(i, j, k)) ?? -1
+          let p = this.head[hash(i, j, k) & (this.head.length - 1)]!
           for (; p >= 0; p = this.next[p]!) {
             const dx = this.x[p]! - x
             const dy = this.y[p]! - y
@@ -65,17 +63,41 @@ export class SnapGrid {
   add(x: number, y: number, z: number): number {
     const found = this.find(x, y, z)
     if (found >= 0) return found
-    const id = this.x.length
-    this.x.push(x)
-    this.y.push(y)
-    this.z.push(z)
-    const key = hash(Math.floor(x / this.cell), Math.floor(y / this.cell), Math.floor(z / this.cell))
-    this.next.push(this.head.get(key) ?? -1)
-    this.head.set(key, id)
+    const id = this.size++
+    if (id === this.x.length) this.grow()
+    this.x[id] = x
+    this.y[id] = y
+    this.z[id] = z
+    this.enter(id)
     return id
+  }
+
+  private enter(id: number): void {
+    const { cell } = this
+    const key = hash(Math.floor(this.x[id]! / cell), Math.floor(this.y[id]! / cell), Math.floor(this.z[id]! / cell))
+    const bucket = key & (this.head.length - 1)
+    this.next[id] = this.head[bucket]!
+    this.head[bucket] = id
+  }
+
+  private grow(): void {
+    const capacity = 2 * this.x.length
+    const longer = (a: Float64Array<ArrayBuffer>): Float64Array<ArrayBuffer> => {
+      const b = new Float64Array(capacity)
+      b.set(a)
+      return b
+    }
+    this.x = longer(this.x)
+    this.y = longer(this.y)
+    this.z = longer(this.z)
+    this.next = new Int32Array(capacity)
+    this.head = new Int32Array(2 * capacity).fill(-1)
+    for (let id = 0; id < this.size - 1; id++) this.enter(id)
   }
 }
 
 // Collisions only cost a distance test, so a cheap integer mix is enough.
-const hash = (i: number, j: number, k: number): number =>
-  (Math.imul(i, 73856093) ^ Math.imul(j, 19349663) ^ Math.imul(k, 83492791)) | 0
+const hash = (i: number, j: number, k: number): number => {
+  const h = Math.imul(i, 73856093) ^ Math.imul(j, 19349663) ^ Math.imul(k, 83492791)
+  return h ^ (h >>> 15)
+}

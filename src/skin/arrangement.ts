@@ -28,12 +28,13 @@ export interface Arrangement {
   /** Vertex i at (points.x[i], points.y[i]) in `frame`. */
   readonly points: SnapGrid
   /** By half-edge: start vertex, next half-edge round the cell, cell (-1: the unbounded one). */
-  readonly origin: readonly number[]
-  readonly next: readonly number[]
-  readonly cell: readonly number[]
+  readonly origin: Int32Array
+  readonly next: Int32Array
+  readonly cell: Int32Array
   readonly cells: readonly Cell[]
-  /** By edge: planes other than this one whose filled faces reach along the whole edge. */
-  readonly crossers: readonly (readonly number[])[]
+  /** Planes other than this one whose filled faces reach along the whole of edge e: crossers[crossersFrom[e] …]. */
+  readonly crossers: Int32Array
+  readonly crossersFrom: Int32Array
   /** Half-edge from vertex a to vertex b, or -1. */
   halfEdge(a: number, b: number): number
 }
@@ -131,9 +132,8 @@ export const arrange = (
   const points = new SnapGrid(tolerance.merge, tolerance.gap, tolerance.cell)
   const origin: number[] = []
   const direction: number[] = []
-  const crossers: number[][] = []
-  const edgeOf = new Map<number, number>()
-  const key = (a: number, b: number): number => a * 0x4000000 + b
+  const crossers: number[] = []
+  const crossersFrom: number[] = [0]
   for (const line of lines) {
     const marks = line.marks.sort((x, y) => x - y)
     const angle = Math.atan2(line.dy, line.dx)
@@ -144,38 +144,48 @@ export const arrange = (
       if (vertex === previous) continue
       const middle = (mark + previousMark) / 2
       if (previous >= 0 && reaches(line.merged, middle, 0)) {
-        const h = origin.length
         origin.push(previous, vertex)
         direction.push(angle, angle > 0 ? angle - Math.PI : angle + Math.PI)
-        edgeOf.set(key(previous, vertex), h)
-        edgeOf.set(key(vertex, previous), h + 1)
-        const reaching: number[] = []
+        const first = crossers.length
         for (const span of line.spans)
-          if (span.plane !== plane.id && span.from < middle && middle < span.to && !reaching.includes(span.plane))
-            reaching.push(span.plane)
-        crossers.push(reaching)
+          if (span.plane !== plane.id && span.from < middle && middle < span.to)
+            if (crossers.indexOf(span.plane, first) < 0) crossers.push(span.plane)
+        crossersFrom.push(crossers.length)
       }
       previous = vertex
       previousMark = mark
     }
   }
 
-  const next = linkHalfEdges(origin, direction, points.size)
-  const { cell, cells } = traceCells(origin, next, points)
+  // Typed arrays from here on: a mesh keeps thousands of arrangements, and the collector need not look into these.
+  const origins = Int32Array.from(origin)
+  const outgoing = new Int32Array(points.size).fill(-1)
+  for (let h = 0; h < origins.length; h++) outgoing[origins[h]!] = h
+  const next = linkHalfEdges(origins, direction, points.size)
+  const { cell, cells } = traceCells(origins, next, points)
   for (const c of cells) {
-    c.inside = interiorPoint(c, origin, next, points)
+    c.inside = interiorPoint(c, origins, next, points)
     for (const face of own) if (covers(face, c.inside)) c.faces.push(face.index)
   }
   return {
     plane,
     frame,
     points,
-    origin,
+    origin: origins,
     next,
     cell,
     cells,
-    crossers,
-    halfEdge: (a, b) => edgeOf.get(key(a, b)) ?? -1,
+    crossers: Int32Array.from(crossers),
+    crossersFrom: Int32Array.from(crossersFrom),
+    halfEdge: (a, b) => {
+      const start = outgoing[a]!
+      for (let h = start; h >= 0; ) {
+        if (origins[h ^ 1] === b) return h
+        h = next[h ^ 1]!
+        if (h === start) break
+      }
+      return -1
+    },
   }
 }
 
@@ -213,10 +223,10 @@ const reaches = (merged: readonly [number, number][], t: number, on: number): bo
 }
 
 /** next[h]: at the end of h, turn as far clockwise as possible from the way back, which keeps the cell on the left. */
-const linkHalfEdges = (origin: readonly number[], direction: readonly number[], vertices: number): number[] => {
+const linkHalfEdges = (origin: Int32Array, direction: readonly number[], vertices: number): Int32Array => {
   const outgoing: number[][] = Array.from({ length: vertices }, () => [])
   for (let h = 0; h < origin.length; h++) outgoing[origin[h]!]!.push(h)
-  const next = new Array<number>(origin.length).fill(-1)
+  const next = new Int32Array(origin.length).fill(-1)
   for (const list of outgoing) {
     list.sort((a, b) => direction[a]! - direction[b]!)
     for (let i = 0; i < list.length; i++) next[list[(i + 1) % list.length]! ^ 1] = list[i]!
@@ -225,7 +235,7 @@ const linkHalfEdges = (origin: readonly number[], direction: readonly number[], 
 }
 
 /** The half-edges of the closed walk that starts at h. */
-export const walk = (next: readonly number[], start: number): number[] => {
+export const walk = (next: Int32Array, start: number): number[] => {
   const path: number[] = []
   let h = start
   do {
@@ -235,7 +245,7 @@ export const walk = (next: readonly number[], start: number): number[] => {
   return path
 }
 
-const ringOf = (path: readonly number[], origin: readonly number[], points: SnapGrid): Vec2[] =>
+const ringOf = (path: readonly number[], origin: Int32Array, points: SnapGrid): Vec2[] =>
   path.map((h) => [points.x[origin[h]!]!, points.y[origin[h]!]!])
 
 const areaOf = (ring: readonly Vec2[]): number => {
@@ -250,12 +260,8 @@ const areaOf = (ring: readonly Vec2[]): number => {
   return twice / 2
 }
 
-const traceCells = (
-  origin: readonly number[],
-  next: readonly number[],
-  points: SnapGrid,
-): { cell: number[]; cells: Cell[] } => {
-  const cell = new Array<number>(origin.length).fill(-2)
+const traceCells = (origin: Int32Array, next: Int32Array, points: SnapGrid): { cell: Int32Array; cells: Cell[] } => {
+  const cell = new Int32Array(origin.length).fill(-2)
   const cells: Cell[] = []
   const rims: { start: number; ring: Vec2[]; path: number[]; area: number }[] = []
   const rings: Vec2[][] = []
@@ -300,7 +306,7 @@ const traceCells = (
   return { cell, cells }
 }
 
-const components = (origin: readonly number[]): number[] => {
+const components = (origin: Int32Array): number[] => {
   const root: number[] = []
   const find = (i: number): number => {
     while (root[i] !== i) i = root[i] = root[root[i]!]!
@@ -312,7 +318,7 @@ const components = (origin: readonly number[]): number[] => {
 }
 
 /** A point inside a cell, by the diagonal argument of polygon triangulation at one of its convex corners. */
-const interiorPoint = (c: Cell, origin: readonly number[], next: readonly number[], points: SnapGrid): Vec2 => {
+const interiorPoint = (c: Cell, origin: Int32Array, next: Int32Array, points: SnapGrid): Vec2 => {
   const outer = walk(next, c.starts[0]!)
   const ids = outer.map((h) => origin[h]!)
   const at = (i: number): Vec2 => [points.x[i]!, points.y[i]!]

@@ -16,7 +16,7 @@ import { covers, type FilledFace } from './filled-face'
 import { type PlaneSet, toPlane, toSpace } from './planes'
 
 /** One cell that meets an edge, as it stands around it. */
-export interface Spoke {
+interface Spoke {
   readonly plane: number
   /** Cell sides (numbered as in `Sides`) that face the sector after and before this cell, turning about the edge. */
   readonly after: number
@@ -31,8 +31,11 @@ export interface Sides {
   readonly base: ReadonlyMap<number, number>
   /** True: the outside touches this side. */
   readonly outside: readonly boolean[]
-  /** By representative plane id, then by edge: the spokes round it, sorted by angle. */
-  readonly fans: ReadonlyMap<number, readonly (readonly Spoke[])[]>
+  /**
+   * By representative plane id, then by edge: bit s is set when, on side s of the plane, nothing stands between the cells
+   * on the two sides of the edge.
+   */
+  readonly level: ReadonlyMap<number, Uint8Array>
 }
 
 export const sideOf = (base: number, cell: number, side: 0 | 1): number => base + 2 * cell + side
@@ -52,16 +55,20 @@ export const findOutside = (
   const regions = new UnionFind(count + 1)
   const infinity = count
 
-  const fans = new Map<number, Spoke[][]>()
+  const level = new Map<number, Uint8Array>()
   for (const r of set.representatives) {
     const arrangement = arrangements.get(r)!
-    const list: Spoke[][] = []
-    for (let e = 0; e < arrangement.origin.length / 2; e++) {
+    const bits = new Uint8Array(arrangement.origin.length / 2)
+    for (let e = 0; e < bits.length; e++) {
       const fan = spokesAround(set, arrangements, base, arrangement, e)
-      for (let i = 0; i < fan.length; i++) regions.union(fan[i]!.after, fan[(i + 1) % fan.length]!.before)
-      list.push(fan)
+      for (let i = 0; i < fan.length; i++) {
+        const a = fan[i]!
+        const b = fan[(i + 1) % fan.length]!
+        regions.union(a.after, b.before)
+        if (a !== b && a.plane === r && b.plane === r) bits[e]! |= 1 << ((a.after - base.get(r)!) & 1)
+      }
     }
-    fans.set(r, list)
+    level.set(r, bits)
     for (const { motion, flips } of set.stabilizers.get(r)!) {
       const image = cellImages(arrangement, motion)
       const b = base.get(r)!
@@ -85,7 +92,7 @@ export const findOutside = (
     })
   }
   if (!outside.includes(true)) throw new BrokenPromise('The skin is empty.', { cells: count / 2 })
-  return { count, base, outside, fans }
+  return { count, base, outside, level }
 }
 
 /** The cells that meet edge e of a representative, sorted by angle about the edge (from vertex of half-edge 2e on). */
@@ -105,7 +112,8 @@ const spokesAround = (
   const d = normalize(sub(b, a))
   const { u, v } = planeFrame(d)
   const fan: Spoke[] = []
-  for (const id of [home.plane.id, ...home.crossers[e]!]) {
+  for (let k = home.crossersFrom[e]! - 1; k < home.crossersFrom[e + 1]!; k++) {
+    const id = k < home.crossersFrom[e]! ? home.plane.id : home.crossers[k]!
     const plane = set.planes[id]!
     const there = arrangements.get(plane.representative)!
     const h = id === home.plane.id ? 2 * e : locateEdge(there, transpose(plane.motion), a, b)

@@ -73,7 +73,7 @@ export const collectPanels = (
         orbit: t.orbit,
       })
   }
-  const points = grid.x.map((x, i): Vec3 => [x, grid.y[i]!, grid.z[i]!])
+  const points = Array.from({ length: grid.size }, (_, i): Vec3 => [grid.x[i]!, grid.y[i]!, grid.z[i]!])
   return { panels, points }
 }
 
@@ -87,26 +87,21 @@ const panelsOfPlane = (
   const r = arrangement.plane.id
   const base = sides.base.get(r)!
   const { cell, cells, origin, next } = arrangement
-  const fans = sides.fans.get(r)!
   const kinds = cells.map((c) => Math.min(...c.faces.map((f) => kindOfFace[f]!)))
   const joined = new UnionFind(2 * cells.length)
-  // seamless[side][e]: on that side the surface runs on across e.
-  const seamless: [boolean[], boolean[]] = [[], []]
-  fans.forEach((fan, e) => {
-    seamless[0].push(false)
-    seamless[1].push(false)
+  // seamless[side][e]: on that side the surface runs on across e, in one colour.
+  const level = sides.level.get(r)!
+  const seamless: [Uint8Array, Uint8Array] = [new Uint8Array(level.length), new Uint8Array(level.length)]
+  for (let e = 0; e < level.length; e++) {
     const left = cell[2 * e]!
     const right = cell[2 * e + 1]!
-    for (let i = 0; i < fan.length; i++) {
-      const a = fan[i]!
-      const b = fan[(i + 1) % fan.length]!
-      if (a.plane !== r || b.plane !== r || a === b || !sides.outside[a.after]) continue
-      if (kinds[left] !== kinds[right]) continue
-      const side = ((a.after - base) & 1) as 0 | 1
-      seamless[side][e] = true
+    if (level[e] === 0 || kinds[left] !== kinds[right]) continue
+    for (const side of [0, 1] as const) {
+      if (!(level[e]! & (1 << side)) || !sides.outside[sideOf(base, left, side)]) continue
+      seamless[side][e] = 1
       joined.union(2 * left + side, 2 * right + side)
     }
-  })
+  }
 
   const members = new Map<number, { side: 0 | 1; faces: Set<number>; kind: number; rings: number[][] }>()
   const membersOf = (root: number): { side: 0 | 1; faces: Set<number>; kind: number; rings: number[][] } => {
