@@ -1,0 +1,108 @@
+/** The isometries that map a solid onto itself, found from its faces alone. */
+import { SnapGrid } from '../geometry/snap'
+import {
+  add,
+  apply,
+  cross,
+  determinant,
+  distance,
+  type Mat3,
+  multiply,
+  normalize,
+  scale,
+  sub,
+  transpose,
+  type Vec3,
+} from '../geometry/vec3'
+
+interface Shape {
+  readonly vertices: readonly Vec3[]
+  readonly faces: readonly { readonly cycle: readonly number[]; readonly kind: number }[]
+}
+
+export interface Isometries {
+  /** Determinant +1, identity first. */
+  readonly rotations: readonly Mat3[]
+  /** Determinant −1; empty for a chiral solid. */
+  readonly reflections: readonly Mat3[]
+}
+
+/** Right-handed (or, mirrored, left-handed) orthonormal frame on a flag: vertex, next vertex, face centre. */
+const flagFrame = (vertex: Vec3, next: Vec3, centre: Vec3, handed: 1 | -1): Mat3 => {
+  const u = normalize(sub(next, vertex))
+  const inward = sub(centre, vertex)
+  const w = normalize(cross(u, inward))
+  return transpose([u, cross(w, u), scale(w, handed)])
+}
+
+/**
+ * Every isometry takes the first corner of the first face to some corner of a face of the same kind, one way round or the
+ * other; each such candidate is kept if it maps vertices to vertices and faces to faces.
+ * @param shape centred at the origin
+ */
+export const findIsometries = (shape: Shape): Isometries => {
+  const { vertices, faces } = shape
+  const grid = new SnapGrid(1e-7, 1e-7, 1e-2)
+  for (const [x, y, z] of vertices) grid.add(x, y, z)
+  const keyOf = (kind: number, cycle: readonly number[]): string =>
+    `${kind}:${[...cycle].sort((a, b) => a - b).join(' ')}`
+  const known = new Set(faces.map((f) => keyOf(f.kind, f.cycle)))
+  const centres = faces.map(({ cycle }) =>
+    scale(
+      cycle.reduce((s, v) => add(s, vertices[v]!), [0, 0, 0] as Vec3),
+      1 / cycle.length,
+    ),
+  )
+  const counts = new Map<number, number>()
+  for (const f of faces) counts.set(f.kind, (counts.get(f.kind) ?? 0) + f.cycle.length)
+  const rarest = [...counts.entries()].sort((a, b) => a[1] - b[1] || a[0] - b[0])[0]![0]
+  const home = faces.findIndex((f) => f.kind === rarest)
+  const [first, second] = faces[home]!.cycle as readonly [number, number]
+  const from = flagFrame(vertices[first]!, vertices[second]!, centres[home]!, 1)
+  const maps = (m: Mat3): boolean => {
+    const image: number[] = []
+    for (const p of vertices) {
+      const [x, y, z] = apply(m, p)
+      const there = grid.find(x, y, z)
+      if (there < 0) return false
+      image.push(there)
+    }
+    return faces.every((f) =>
+      known.has(
+        keyOf(
+          f.kind,
+          f.cycle.map((v) => image[v]!),
+        ),
+      ),
+    )
+  }
+  const same = (a: Mat3, b: Mat3): boolean => a.every((row, i) => distance(row, b[i]!) < 1e-6)
+  const found: { 1: Mat3[]; '-1': Mat3[] } = { 1: [], '-1': [] }
+  faces.forEach((f, i) => {
+    if (f.kind !== rarest) return
+    const n = f.cycle.length
+    for (let k = 0; k < n; k++)
+      for (const step of [1, n - 1])
+        for (const handed of [1, -1] as const) {
+          const a = vertices[f.cycle[k]!]!
+          const b = vertices[f.cycle[(k + step) % n]!]!
+          const m = multiply(flagFrame(a, b, centres[i]!, handed), transpose(from))
+          const list = found[handed]
+          if (!list.some((x) => same(x, m)) && maps(m)) list.push(m)
+        }
+  })
+  const rotations = found[1].filter((m) => determinant(m) > 0)
+  return { rotations: identityFirst(rotations), reflections: found['-1'] }
+}
+
+const identityFirst = (list: readonly Mat3[]): Mat3[] => {
+  const trace = (m: Mat3): number => m[0][0] + m[1][1] + m[2][2]
+  return [...list].sort((a, b) => Number(trace(b) > 2.999) - Number(trace(a) > 2.999))
+}
+
+/** Schoenflies symbol of a polyhedral group. */
+export const schoenflies = ({ rotations, reflections }: Isometries): string => {
+  const letter = rotations.length === 60 ? 'I' : rotations.length === 24 ? 'O' : rotations.length === 12 ? 'T' : '?'
+  if (reflections.length === 0) return letter
+  return letter === 'T' ? 'T_d' : `${letter}_h`
+}
