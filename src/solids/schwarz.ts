@@ -13,7 +13,7 @@ import {
   sub,
   type Vec3,
 } from '../geometry/vec3'
-import { type Rational, valueOf } from './wythoff-symbol'
+import { type Rational, ratio } from './wythoff-symbol'
 
 export interface SchwarzTriangle {
   readonly numbers: readonly [Rational, Rational, Rational]
@@ -30,7 +30,7 @@ const sideCosine = (opposite: number, a: number, b: number): number =>
   (Math.cos(opposite) + Math.cos(a) * Math.cos(b)) / (Math.sin(a) * Math.sin(b))
 
 export const schwarzTriangle = (numbers: readonly [Rational, Rational, Rational]): SchwarzTriangle => {
-  const [a, b, c] = numbers.map((x) => Math.PI / valueOf(x)) as [number, number, number]
+  const [a, b, c] = numbers.map((x) => Math.PI / ratio(x)) as [number, number, number]
   const cosPQ = sideCosine(c, a, b)
   const cosPR = sideCosine(b, a, c)
   const sinPQ = Math.sqrt(1 - cosPQ * cosPQ)
@@ -39,7 +39,7 @@ export const schwarzTriangle = (numbers: readonly [Rational, Rational, Rational]
   const q: Vec3 = [sinPQ, 0, cosPQ]
   const r: Vec3 = [sinPR * Math.cos(a), sinPR * Math.sin(a), cosPR]
   const mirror = (x: Vec3, y: Vec3): Vec3 => normalize(cross(x, y))
-  const turn = (axis: Vec3, x: Rational): Mat3 => rotationAbout(axis, (2 * Math.PI) / valueOf(x))
+  const turn = (axis: Vec3, x: Rational): Mat3 => rotationAbout(axis, (2 * Math.PI) / ratio(x))
   return {
     numbers,
     corners: [p, q, r],

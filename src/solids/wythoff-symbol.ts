@@ -7,7 +7,7 @@ export interface Rational {
   readonly d: number
 }
 
-export const valueOf = ({ n, d }: Rational): number => n / d
+export const ratio = ({ n, d }: Rational): number => n / d
 
 export interface WythoffSymbol {
   /** Numbers before and after the bar; a bracketed pair gives `before` its first number and `alternative` its second. */

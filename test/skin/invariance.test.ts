@@ -9,15 +9,26 @@ import { buildSolid, listSolids, transformSolid } from '../../src/solids'
 import type { FillRule } from '../../src/solids/types'
 import { randomRotation, seeded } from '../support/random'
 
-const digest = (skin: Skin): unknown => ({
+const counts = (skin: Skin): unknown => ({
   panels: skin.panels.length,
   creases: skin.creases.length,
   bodies: skin.bodies,
   parts: skin.parts,
   contacts: skin.contacts.length,
-  areas: skin.panels.map((p) => p.area.toFixed(8)).sort(),
-  angles: skin.creases.map((c) => c.innerAngle.toFixed(5)).sort(),
 })
+
+/** Compared as sorted numbers, not as rounded text: a value on a rounding border may fall either way. */
+const expectAlike = (a: Skin, b: Skin): void => {
+  expect(counts(a)).toEqual(counts(b))
+  const worst = (of: (s: Skin) => number[]): number => {
+    const ascending = (s: Skin): number[] => of(s).sort((x, y) => x - y)
+    const other = ascending(b)
+    return Math.max(...ascending(a).map((x, i) => Math.abs(x - (other[i] as number))))
+  }
+  expect(worst((s) => s.panels.map((p) => p.area))).toBeLessThan(1e-9)
+  expect(worst((s) => s.creases.map((c) => c.length))).toBeLessThan(1e-8)
+  expect(worst((s) => s.creases.map((c) => c.innerAngle))).toBeLessThan(1e-6)
+}
 
 describe('the skin of all 75, turned and shuffled', () => {
   for (const [k, facts] of listSolids().entries())
@@ -29,7 +40,7 @@ describe('the skin of all 75, turned and shuffled', () => {
         expect(validateSkin(plain).filter((c) => !c.ok)).toEqual([])
         const moved = computeSkin(transformSolid(solid, randomRotation(seeded(seed)), seed), fill)
         expect(validateSkin(moved).filter((c) => !c.ok)).toEqual([])
-        expect(digest(moved)).toEqual(digest(plain))
+        expectAlike(moved, plain)
         expect(Math.abs(moved.area / plain.area - 1)).toBeLessThan(1e-9)
         expect(Math.abs(moved.volume / plain.volume - 1)).toBeLessThan(1e-9)
       })
@@ -37,10 +48,15 @@ describe('the skin of all 75, turned and shuffled', () => {
 })
 
 describe('symmetry is a short cut only', () => {
-  for (const id of ['great-icosahedron', 'tetrahemihexahedron', 'great-snub-dodecicosidodecahedron', 'rhombicosahedron'])
+  for (const id of [
+    'great-icosahedron',
+    'tetrahemihexahedron',
+    'great-snub-dodecicosidodecahedron',
+    'rhombicosahedron',
+  ])
     test(id, () => {
       const solid = buildSolid(id)
       const alone = computeSkin({ ...solid, rotations: [identity3] })
-      expect(digest(alone)).toEqual(digest(computeSkin(solid)))
+      expectAlike(alone, computeSkin(solid))
     })
 })
