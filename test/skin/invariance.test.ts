@@ -27,7 +27,9 @@ const expectAlike = (a: Skin, b: Skin): void => {
   }
   expect(worst((s) => s.panels.map((p) => p.area))).toBeLessThan(1e-9)
   expect(worst((s) => s.creases.map((c) => c.length))).toBeLessThan(1e-8)
-  expect(worst((s) => s.creases.map((c) => c.innerAngle))).toBeLessThan(1e-6)
+  // At line contacts the angle follows the pairing, and among contacts of equal length either may be crossed.
+  const onSurface = (s: Skin): number[] => s.creases.filter((c) => c.contact === 'surface').map((c) => c.innerAngle)
+  expect(worst(onSurface)).toBeLessThan(1e-6)
 }
 
 describe('the skin of all 75, turned and shuffled', () => {
