@@ -8,6 +8,7 @@ import { SnapGrid } from '../geometry/snap'
 import { add, cross, dot, norm, planeFrame, scale, sub, type Vec3 } from '../geometry/vec3'
 import { layers } from './bias'
 import { parseHex, type Rgb } from './colour'
+import { insideOf } from './light'
 import type { SceneItem, SceneOptions } from './types'
 
 export interface Model {
@@ -17,8 +18,9 @@ export interface Model {
   /** In the rings' units; a model point is (p − centre) / radius. */
   readonly centre: Vec3
   readonly radius: number
-  readonly backs: 'dull' | 'same'
-  readonly colours: readonly Rgb[]
+  /** RGB per item in full light, as seen from outside and from inside. */
+  readonly outside: Float32Array
+  readonly inside: Float32Array
   /** Per item: rank of its kind in the order of first appearance, capped; the lower one wins in a shared plane. */
   readonly layer: Uint8Array
   /** Per vertex x, y, z; every ring point of every item is a vertex of its own, so that items can move apart. */
@@ -162,8 +164,11 @@ export const buildModel = (items: readonly SceneItem[], options: SceneOptions = 
           classes.set(key, id)
         }
         edgeClass[edge] = id
+        const end = 3 * (ring + next)
         edgeLength += Math.hypot(
-          ...[0, 1, 2].map((axis) => closed[3 * edge + axis]! - closed[3 * (ring + next) + axis]!),
+          closed[3 * edge]! - closed[end]!,
+          closed[3 * edge + 1]! - closed[end + 1]!,
+          closed[3 * edge + 2]! - closed[end + 2]!,
         )
       }
     }
@@ -177,13 +182,14 @@ export const buildModel = (items: readonly SceneItem[], options: SceneOptions = 
     return Math.min(kinds.get(item.kind)!, layers - 1)
   })
 
+  const colours = items.map((item) => readColour(item))
   return {
     items,
     indexOf,
     centre,
     radius,
-    backs: options.backs ?? 'dull',
-    colours: items.map((item) => readColour(item)),
+    outside: Float32Array.from(colours.flat()),
+    inside: Float32Array.from(colours.flatMap((c) => (options.backs === 'same' ? c : insideOf(c)))),
     layer,
     closed,
     vertexItem,

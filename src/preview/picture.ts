@@ -169,10 +169,14 @@ export class Picture {
     })
     const film = parseHex(stage.theme.ghost)
 
+    // One packed number per tone, in the byte order of this machine.
+    const packedTones = new Uint32Array(tones.buffer)
+    const packed = new Uint32Array(pixels.buffer)
     for (let row = 0; row < rows; row++) {
       for (let column = 0; column < columns; column++) {
         const stripe = Math.floor((row + column) / hatchStep) & 1
-        const out = 4 * (row * columns + column)
+        const index = row * columns + column
+        const out = 4 * index
         const corner = row * samples * width + column * samples
         // Most pixels lie within one panel, or beside the model.
         const firstCode = code[corner]!
@@ -181,15 +185,7 @@ export class Picture {
           for (let i = 0, at = corner + j * width; i < samples; i++, at++)
             if (code[at] !== firstCode || line[at] !== 0) plain = false
         if (plain) {
-          if (firstCode === 0) {
-            pixels.fill(0, out, out + 4)
-          } else {
-            const t = toneAt(firstCode, hatched, stripe)
-            pixels[out] = tones[t]!
-            pixels[out + 1] = tones[t + 1]!
-            pixels[out + 2] = tones[t + 2]!
-            pixels[out + 3] = 255
-          }
+          packed[index] = firstCode === 0 ? 0 : packedTones[toneAt(firstCode, hatched, stripe) >> 2]!
           continue
         }
         let r = 0

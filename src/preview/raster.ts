@@ -114,8 +114,8 @@ export const drawTriangles = (
       b = c
       c = swap
     }
-    const top = ay < 0.5 ? 0 : Math.ceil(ay - 0.5)
-    const bottom = Math.min(height, Math.ceil(cy - 0.5))
+    const top = ay < 0.5 ? 0 : Math.ceil(ay - 0.5) | 0
+    const bottom = Math.min(height, Math.ceil(cy - 0.5)) | 0
     if (top >= bottom) continue
     const longSlope = (cx - ax) / (cy - ay)
     const upperSlope = by > ay ? (bx - ax) / (by - ay) : 0
@@ -127,8 +127,8 @@ export const drawTriangles = (
       const short = y < by ? ax + upperSlope * (y - ay) : bx + lowerSlope * (y - by)
       const from = longIsLeft ? long : short
       const to = longIsLeft ? short : long
-      const first = from < 0.5 ? 0 : Math.ceil(from - 0.5)
-      const last = to > width + 0.5 ? width : Math.ceil(to - 0.5)
+      const first = from < 0.5 ? 0 : Math.ceil(from - 0.5) | 0
+      const last = to > width + 0.5 ? width : Math.ceil(to - 0.5) | 0
       let at = row * width + first
       const end = row * width + last
       let w = base + stepX * first + stepY * row
@@ -180,7 +180,10 @@ export const drawLines = (
     const length = Math.sqrt(dx * dx + dy * dy)
     if (length < 1e-9) continue
     const flat = Math.abs(dx) >= Math.abs(dy)
-    const [p0, d, q0, e] = flat ? [x0, dx, y0, dy] : [y0, dy, x0, dx]
+    const p0 = flat ? x0 : y0
+    const q0 = flat ? y0 : x0
+    const d = flat ? dx : dy
+    const e = flat ? dy : dx
     const along = flat ? width : height
     const across = flat ? height : width
     const strideAlong = flat ? 1 : width

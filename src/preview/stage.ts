@@ -2,10 +2,10 @@
  * What is to be seen at the moment, as plain lists that both renderers draw: vertex places, triangles, lines by style,
  * and one tone per item and side. All decisions about visibility, light and marks are taken here, once.
  */
-import { cross, type Mat3, scale, sub, type Vec3 } from '../geometry/vec3'
+import { cross, dot, type Mat3, scale, sub, type Vec3 } from '../geometry/vec3'
 import type { Camera } from './camera'
-import { darken, mix, parseHex, type Rgb } from './colour'
-import { brightness, insideOf } from './light'
+import { parseHex, type Rgb } from './colour'
+import { brightness, lightIn } from './light'
 import { buildModel, type Model } from './model'
 import type { Lit, PreviewTheme, SceneItem, SceneOptions, SeamLine } from './types'
 
@@ -39,6 +39,7 @@ export interface LineSet {
 export const tonesPerItem = 4
 /** Hatch: stripes at 45 degrees, this wide in CSS px across the diagonal step. */
 export const hatchPx = 4
+const hatchStrength = 0.75
 export const ghostAlpha = 0.14
 
 const hiddenDash = 6
@@ -203,23 +204,25 @@ export class Stage {
    * with every turn of the model.
    */
   tones(rotation: Mat3, out = new Uint8Array(4 * tonesPerItem * this.model.items.length)): Uint8Array {
-    const { items, colours, backs } = this.model
-    items.forEach((item, i) => {
-      const outside = colours[i]!
-      const inside = backs === 'same' ? outside : insideOf(outside)
-      const lightOut = brightness(rotation, item.normal)
-      const lightIn = brightness(rotation, scale(item.normal, -1))
+    const { items, outside, inside } = this.model
+    const light = lightIn(rotation)
+    for (let i = 0; i < items.length; i++) {
+      const facing = dot(items[i]!.normal, light)
       const accent = this.accents[i]
-      const tones = [darken(outside, lightOut), darken(inside, lightIn)]
-      const stripes = accent ? tones.map((tone) => mix(tone, accent, 0.75)) : tones
-      ;[...tones, ...stripes].forEach(([r, g, b], k) => {
-        const at = 4 * (tonesPerItem * i + k)
-        out[at] = r
-        out[at + 1] = g
-        out[at + 2] = b
-        out[at + 3] = 255
-      })
-    })
+      for (let side = 0; side < 2; side++) {
+        const colours = side === 0 ? outside : inside
+        const bright = brightness(side === 0 ? facing : -facing)
+        const plain = 4 * (tonesPerItem * i + side)
+        const stripe = plain + 8
+        for (let k = 0; k < 3; k++) {
+          const tone = Math.min(255, colours[3 * i + k]! * bright)
+          out[plain + k] = tone
+          out[stripe + k] = accent ? tone + (accent[k]! - tone) * hatchStrength : tone
+        }
+        out[plain + 3] = 255
+        out[stripe + 3] = 255
+      }
+    }
     return out
   }
 

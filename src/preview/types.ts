@@ -69,10 +69,10 @@ export interface PreviewOptions {
   readonly label: string
   readonly theme?: Partial<PreviewTheme>
   /**
-   * 'auto' (default): WebGL where the browser gives it, else the z-buffer. 'fast': WebGL only where the browser says it
-   * is not slow (a GPU); without one the z-buffer is several times faster. 'webgl' falls back too; 'canvas' never asks.
+   * 'auto' (default): WebGL where the browser gives it, else the z-buffer. 'fast': WebGL only where a GPU draws it;
+   * without one the z-buffer is several times faster. 'canvas' never asks for WebGL.
    */
-  readonly mode?: 'auto' | 'fast' | 'webgl' | 'canvas'
+  readonly mode?: 'auto' | 'fast' | 'canvas'
   /** False: the view ignores wheel, drag, touch and keys (a small picture in a corner). Picks still work. Default true. */
   readonly interactive?: boolean
   /** Outward direction that faces the viewer at first. */

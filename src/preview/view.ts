@@ -36,7 +36,7 @@ const firstRenderer = async (mode: NonNullable<PreviewOptions['mode']>): Promise
       premultipliedAlpha: true,
       failIfMajorPerformanceCaveat: mode === 'fast',
     })
-    if (context) {
+    if (context && !(mode === 'fast' && isSoftware(context))) {
       try {
         const { WebglRenderer } = await import('./webgl-renderer')
         return new WebglRenderer(canvas, context)
@@ -47,6 +47,13 @@ const firstRenderer = async (mode: NonNullable<PreviewOptions['mode']>): Promise
     }
   }
   return new CanvasRenderer(newCanvas())
+}
+
+/** Some browsers draw WebGL without a GPU and do not call that slow; the z-buffer is several times faster than that. */
+const isSoftware = (context: WebGL2RenderingContext): boolean => {
+  const info = context.getExtension('WEBGL_debug_renderer_info')
+  const name = String(context.getParameter(info ? info.UNMASKED_RENDERER_WEBGL : context.RENDERER))
+  return /swiftshader|llvmpipe|softpipe|software|basic render/i.test(name)
 }
 
 class View implements Preview {

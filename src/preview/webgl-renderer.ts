@@ -11,9 +11,6 @@ import {
   DoubleSide,
   FrontSide,
   GLSL3,
-  InstancedBufferGeometry,
-  InstancedInterleavedBuffer,
-  InterleavedBufferAttribute,
   Matrix4,
   Mesh,
   OrthographicCamera,
@@ -38,7 +35,7 @@ const finestPixelRatio = 2
 const order = { lines: 10, ghostDepth: 1000, ghostFilm: 1001, ghostLines: 1002 }
 
 interface DrawnLines {
-  readonly mesh: Mesh<InstancedBufferGeometry, RawShaderMaterial>
+  readonly mesh: Mesh<BufferGeometry, RawShaderMaterial>
   set: LineSet
 }
 
@@ -172,14 +169,7 @@ export class WebglRenderer implements Renderer {
   }
 
   private lineMesh(set: LineSet): DrawnLines['mesh'] {
-    const geometry = new InstancedBufferGeometry()
-    // Share along the line, side of it.
-    geometry.setAttribute('corner', new BufferAttribute(new Float32Array([0, -1, 1, -1, 1, 1, 0, 1]), 2))
-    geometry.setIndex([0, 1, 2, 0, 2, 3])
-    const ends = new InstancedInterleavedBuffer(Float32Array.from(set.ends), 6)
-    geometry.setAttribute('start', new InterleavedBufferAttribute(ends, 3, 0))
-    geometry.setAttribute('end', new InterleavedBufferAttribute(ends, 3, 3))
-    geometry.instanceCount = set.ends.length / 6
+    const geometry = lineGeometry(set.ends)
     const material = new RawShaderMaterial({
       glslVersion: GLSL3,
       vertexShader: lineVertex,
@@ -226,4 +216,33 @@ export class WebglRenderer implements Renderer {
     this.renderer.forceContextLoss()
     this.canvas.remove()
   }
+}
+
+/**
+ * Four corners per line, each with both ends; the shader widens them to a strip. (Instances of four corners each would
+ * be smaller, but drivers without a GPU draw them many times slower.)
+ */
+const lineGeometry = (ends: Float64Array): BufferGeometry => {
+  const count = ends.length / 6
+  const start = new Float32Array(12 * count)
+  const end = new Float32Array(12 * count)
+  const corner = new Int8Array(8 * count)
+  const index = new Uint32Array(6 * count)
+  for (let i = 0; i < count; i++) {
+    for (let k = 0; k < 4; k++) {
+      start.set(ends.subarray(6 * i, 6 * i + 3), 12 * i + 3 * k)
+      end.set(ends.subarray(6 * i + 3, 6 * i + 6), 12 * i + 3 * k)
+    }
+    // Share along the line, side of it.
+    corner.set([0, -1, 1, -1, 1, 1, 0, 1], 8 * i)
+    index.set(
+      [0, 1, 2, 0, 2, 3].map((k) => 4 * i + k),
+      6 * i,
+    )
+  }
+  return new BufferGeometry()
+    .setAttribute('start', new BufferAttribute(start, 3))
+    .setAttribute('end', new BufferAttribute(end, 3))
+    .setAttribute('corner', new BufferAttribute(corner, 2))
+    .setIndex(new BufferAttribute(index, 1))
 }
