@@ -1,0 +1,82 @@
+import { computed, effect, signal } from '@preact/signals'
+import { render } from 'preact'
+import { createPlanner, createPress, type SolidFacts } from '../worker'
+import { createRouter } from './route'
+import { createWorkshop } from './state/workshop'
+import { openStore } from './storage/database'
+import { createKeeper } from './storage/keeper'
+import './styles/index.css'
+import { type AppContext, Context, nothingPointed, type Pointed } from './ui/context'
+import { Frame } from './ui/Frame'
+import { createPrefs } from './ui/prefs'
+
+/** `crypto.randomUUID` is missing on pages served over plain http within a house network; this is not. */
+const newId = (): string =>
+  [...crypto.getRandomValues(new Uint8Array(12))].map((byte) => byte.toString(16).padStart(2, '0')).join('')
+
+const start = async (): Promise<void> => {
+  const prefs = createPrefs()
+  const router = createRouter()
+  const press = createPress()
+  const catalogue = signal<readonly SolidFacts[]>([])
+  const trouble = signal<string | null>(null)
+  void press.catalogue().then((answer) => {
+    if (answer.ok) catalogue.value = answer.value
+    else trouble.value = `The list of solids could not be made: ${answer.refusal.message}`
+  })
+  const keeper = await createKeeper(() => openStore())
+  const workshop = await createWorkshop({ keeper, planner: createPlanner(), now: Date.now, newId, rest: 350 })
+
+  const spoken = signal('')
+  let timer: ReturnType<typeof setTimeout> | undefined
+  const app: AppContext = {
+    workshop,
+    press,
+    router,
+    prefs,
+    catalogue,
+    solid: computed(() => catalogue.value.find(({ id }) => id === workshop.choices.value.solid) ?? null),
+    trouble,
+    pointed: signal<Pointed>(nothingPointed),
+    spoken,
+    announce(text) {
+      clearTimeout(timer)
+      timer = setTimeout(() => {
+        // The same words twice are news too.
+        spoken.value = spoken.peek() === text ? `${text} ` : text
+      }, 250)
+    },
+  }
+
+  effect(() => {
+    workshop.wanted.value = router.place.value.station !== 'shelf'
+  })
+  // What is pointed at belongs to one station and one plan.
+  effect(() => {
+    void router.place.value.station
+    void workshop.planned.value
+    app.pointed.value = nothingPointed
+  })
+
+  // Another tab of this browser works on the same builds.
+  const wire = 'BroadcastChannel' in globalThis ? new BroadcastChannel('facetwright') : null
+  keeper.onKept = ({ id, revision }) => wire?.postMessage({ id, revision })
+  wire?.addEventListener('message', ({ data }) => void workshop.heard(data.id, data.revision))
+
+  // Asked for as soon as there is something to lose; a refusal changes nothing but that the file matters more.
+  effect(() => {
+    if (workshop.planned.value) void navigator.storage?.persist?.()
+  })
+  addEventListener('beforeunload', (event) => {
+    if (keeper.state.peek().kind !== 'saved') event.preventDefault()
+  })
+
+  render(
+    <Context.Provider value={app}>
+      <Frame />
+    </Context.Provider>,
+    document.getElementById('app')!,
+  )
+}
+
+void start()

@@ -1,0 +1,289 @@
+import { useSignal } from '@preact/signals'
+import { useEffect, useMemo, useRef } from 'preact/hooks'
+import type { Plan, PlanPiece } from '../../plan/types'
+import type { Lit, Preview, SeamLine } from '../../preview'
+import { sayChoices } from '../state/choices'
+import { inOrder, nextPiece, seamsToGlue } from '../state/job'
+import type { Planned } from '../state/workshop'
+import { useApp } from '../ui/context'
+import { lightPiece } from '../ui/lit-page'
+import { ModelView } from '../ui/ModelView'
+import { PieceFigure } from '../ui/PieceFigure'
+import { type Pages, usePageInto, usePages } from '../ui/pages'
+import { facing, pieceByPanel, planItems } from '../ui/scene'
+import { travel } from '../ui/travel'
+import { sayAcross, sayStep } from '../words/bench'
+import { agoText, counted, hoursText } from '../words/figures'
+import { capital } from '../words/solid'
+import { GluingLine } from './GluingLine'
+
+const sheetOf = (plan: Plan, piece: number): number =>
+  plan.sheets.findIndex(({ placed }) => placed.some((entry) => entry.piece === piece)) + 1
+
+/** The sheet with the piece lit. */
+const OnSheet = ({ pages, plan, piece }: { pages: Pages; plan: Plan; piece: PlanPiece }) => {
+  const host = useRef<HTMLDivElement>(null)
+  const index = pages.list.value.length > 0 ? pages.pageOf(piece.id) : -1
+  const light = (): void => lightPiece(host.current, piece.id)
+  usePageInto(host, pages, index, light)
+  useEffect(light, [piece.id])
+  const page = pages.list.value[index]
+  return (
+    <figure class="take-sheet">
+      <div
+        class="paper"
+        ref={host}
+        data-testid="take-page"
+        role="img"
+        aria-label={`Sheet ${sheetOf(plan, piece.id)} with piece ${piece.label} lit`}
+        style={{ aspectRatio: page ? `${page.widthMm} / ${page.heightMm}` : '210 / 297' }}
+      />
+      <figcaption class="figures">
+        Sheet {sheetOf(plan, piece.id)} of {plan.sheets.length}
+      </figcaption>
+    </figure>
+  )
+}
+
+const Others = ({ planned }: { planned: Planned }) => {
+  const { workshop, solid } = useApp()
+  const { jobs } = workshop.build.value
+  const job = workshop.job.value
+  const latest = workshop.planned.value
+  const others = jobs.filter(({ id }) => id !== job?.id)
+  const differs = job !== null && latest !== null && latest.key !== job.planKey
+  if (!differs && others.length === 0) return null
+  const isChiral = solid.value?.chiral ?? planned.plan.model.hand !== 'none'
+  return (
+    <div class="others">
+      {differs && (
+        <p>
+          On the Bench: {sayChoices(planned.choices, isChiral)}. The Board has gone on to another plan; this one stays
+          as you print and glue it.{' '}
+          <button type="button" class="link" onClick={() => workshop.startOver()}>
+            Begin a model of the new plan
+          </button>
+        </p>
+      )}
+      {others.map((other) => (
+        <p key={other.id}>
+          Set aside: {other.choices.heightMm} mm, {counted(other.glued.length, 'piece')} glued,{' '}
+          {agoText(other.changed, Date.now())}.{' '}
+          <button type="button" class="link" onClick={() => workshop.resumeJob(other.id)}>
+            Go on with it
+          </button>
+        </p>
+      ))}
+    </div>
+  )
+}
+
+const AtWork = ({ planned }: { planned: Planned }) => {
+  const { workshop, router, announce } = useApp()
+  const { plan } = planned
+  const glued = workshop.glued.value
+  const tints = workshop.tints.value
+  const pages = usePages(planned)!
+  const order = useMemo(() => inOrder(plan), [plan])
+  const next = nextPiece(plan, glued)
+  const asked = router.place.value.at
+  const piece = order.find(({ step }) => step === asked) ?? next ?? order.at(-1)!
+  const isNext = piece.id === next?.id
+  const isGlued = glued.includes(piece.id)
+  const strong = useSignal<number | null>(null)
+  const showRest = useSignal(false)
+  const seams = useMemo(() => seamsToGlue(plan, glued, piece.id), [plan, glued, piece.id])
+  const seamSet = useMemo(() => new Set(seams), [seams])
+  const creases = useMemo(() => new Map(plan.creases.map((crease) => [crease.id, crease])), [plan])
+  const pieceOf = useMemo(() => pieceByPanel(plan), [plan])
+  const items = useMemo(() => planItems(plan, tints), [plan, tints])
+  const view = useRef<Preview | null>(null)
+  const figure = useRef<HTMLDivElement>(null)
+
+  const shown = useMemo(() => {
+    const on = new Set([...glued, piece.id])
+    const visible = new Set<number>()
+    const rest = new Set<number>()
+    for (const { id } of plan.panels) (on.has(pieceOf.get(id) ?? -1) ? visible : rest).add(id)
+    return { visible, rest }
+  }, [plan, glued, piece.id])
+  const lit = useMemo(
+    (): Lit => ({ groups: new Set([piece.id]), label: `piece ${piece.label}` }),
+    [piece.id, piece.label],
+  )
+  const lines = useMemo(
+    (): SeamLine[] =>
+      seams.flatMap((id) => {
+        const crease = creases.get(id)
+        if (!crease) return []
+        const mine = crease.panels.find((panel) => pieceOf.get(panel) === piece.id)
+        return [
+          {
+            id,
+            ends: crease.ends,
+            strong: strong.value === id,
+            ...(mine === undefined ? {} : { item: mine }),
+            ...(strong.value === id && crease.label ? { label: crease.label } : {}),
+          },
+        ]
+      }),
+    [seams, strong.value, piece.id],
+  )
+  const look = useMemo(() => {
+    const direction = facing(plan, piece.id) ?? plan.panels.find(({ id }) => id === piece.panels[0]!.panel)!.normal
+    return { direction, key: String(piece.id) }
+  }, [plan, piece.id])
+
+  const sentence = sayStep(plan, piece, seams, sheetOf(plan, piece.id))
+  const note = plan.steps.find((entry) => entry.piece === piece.id)?.note ?? ''
+  useEffect(() => {
+    strong.value = null
+    announce(sentence)
+  }, [piece.id])
+
+  const show = (step: number): void => router.refine(step)
+  const glue = (): void => {
+    if (isGlued) {
+      workshop.unglue(piece.id)
+      return
+    }
+    travel(figure.current, view.current, plan, piece)
+    workshop.glue(piece.id)
+    show(0)
+  }
+  const press = useRef(glue)
+  press.current = glue
+  useEffect(() => {
+    const onKey = (event: KeyboardEvent): void => {
+      const target = event.target as HTMLElement
+      if (event.ctrlKey || event.metaKey || event.altKey || target.matches('input, textarea, select')) return
+      if (event.key.toLowerCase() === 'g' && !document.querySelector('dialog[open]')) press.current()
+    }
+    addEventListener('keydown', onKey)
+    return () => removeEventListener('keydown', onKey)
+  }, [])
+
+  const done = glued.length
+  return (
+    <div class="bench" data-glued={done} data-piece-shown={piece.label}>
+      <Others planned={planned} />
+      {next === null && (
+        <p class="finished">
+          All {counted(done, 'piece')} are glued. Let the model set for 18 to 24 hours before you handle it.
+        </p>
+      )}
+      <div class="bench-halves">
+        <section class="take" aria-label="Take">
+          <h2>Take</h2>
+          <div class="take-both">
+            <OnSheet pages={pages} plan={plan} piece={piece} />
+            <figure class="take-piece" ref={figure}>
+              <PieceFigure plan={plan} piece={piece} tints={tints} now={seamSet} strong={strong.value} />
+              <figcaption>
+                Piece {piece.label}
+                {piece.hand !== 'none' && !piece.label.includes(piece.hand) && `, ${piece.hand}`}, {piece.colour} card,
+                template {piece.template}
+              </figcaption>
+            </figure>
+          </div>
+        </section>
+        <section class="place" aria-label="Place">
+          <h2>Place</h2>
+          <ModelView
+            label={`The model so far with piece ${piece.label} lit in its place`}
+            items={items}
+            visible={shown.visible}
+            ghost={showRest.value ? shown.rest : null}
+            lit={lit}
+            seams={lines}
+            look={look}
+            apart="pieces"
+            view={view}
+            onPick={(hit, event) => {
+              const id = hit ? pieceOf.get(hit.item) : undefined
+              const found = order.find((entry) => entry.id === id)
+              if (event === 'click' && found) show(found.step)
+            }}
+          />
+          <label class="choice">
+            <input
+              type="checkbox"
+              checked={showRest.value}
+              onChange={(event) => {
+                showRest.value = event.currentTarget.checked
+              }}
+            />
+            show what is still to come
+          </label>
+        </section>
+      </div>
+      <section class="do" aria-label="Glue">
+        <div class="grow">
+          <p class="sentence" data-testid="sentence">
+            {sentence}
+            {note !== '' && ` ${capital(note)}${/[.!?]$/.test(note) ? '' : '.'}`}
+          </p>
+          {seams.length > 0 && (
+            <ul class="row tight seams" aria-label="Seams to glue">
+              {seams.map((id) => (
+                <li key={id}>
+                  <button
+                    type="button"
+                    class="chip"
+                    aria-pressed={strong.value === id}
+                    onPointerEnter={() => {
+                      strong.value = id
+                    }}
+                    onFocus={() => {
+                      strong.value = id
+                    }}
+                    onClick={() => {
+                      strong.value = id
+                      announce(`Seam ${creases.get(id)?.label} is lit.`)
+                    }}
+                  >
+                    <b>{creases.get(id)?.label}</b> {sayAcross(plan, piece, id)}
+                    {plan.docket.buttSeams.includes(id) && ', no tab'}
+                  </button>
+                </li>
+              ))}
+            </ul>
+          )}
+        </div>
+        <div class="do-buttons">
+          {!isNext && next && (
+            <button type="button" onClick={() => show(0)}>
+              To the next, {next.label}
+            </button>
+          )}
+          <button type="button" class="quiet" disabled={done === 0} onClick={() => workshop.unglue()}>
+            Undo
+          </button>
+          <button type="button" class={`big ${isGlued ? '' : 'accent'}`} onClick={glue}>
+            {isGlued ? 'Not glued after all' : 'Glued'}
+          </button>
+        </div>
+      </section>
+      <GluingLine order={order} glued={glued} shown={piece.id} next={next?.id ?? null} onShow={show} />
+      <p class="figures soft so">
+        {done} of {order.length} glued. About {hoursText(plan.docket.hours.glue * (1 - done / order.length))} of gluing
+        to come.
+      </p>
+    </div>
+  )
+}
+
+export const Bench = () => {
+  const { workshop } = useApp()
+  const planned = workshop.benchPlan.value
+  if (planned) return <AtWork key={planned.key} planned={planned} />
+  return (
+    <p class="empty">
+      {workshop.computing.value
+        ? 'The first piece lies here as soon as the plan is ready.'
+        : workshop.job.value
+          ? 'Fetching the plan of this model.'
+          : 'There is no plan yet.'}
+    </p>
+  )
+}

@@ -1,0 +1,254 @@
+import { signal, useComputed, useSignal } from '@preact/signals'
+import { useEffect, useMemo, useRef } from 'preact/hooks'
+import type { SceneItem } from '../../preview'
+import type { SolidFacts } from '../../worker'
+import { defaultColours } from '../palette'
+import { factsKey } from '../state/workshop'
+import { useApp } from '../ui/context'
+import { ModelView } from '../ui/ModelView'
+import { Picture } from '../ui/Picture'
+import { counted, degreesText, figure } from '../words/figures'
+import { capital, sayFaces, sayKnown, saySymmetry } from '../words/solid'
+import { filterGroups, passes } from './shelf-filter'
+
+/** Kept while the page is open, so that coming back to the Shelf finds it as it was left. */
+const query = signal('')
+const chosen = signal<ReadonlySet<string>>(new Set())
+const looked = signal<string | null>(null)
+const hand = signal<'left' | 'right'>('right')
+
+/** Ids that the search finds, best first; null while there is nothing to search for. */
+const useFound = () => {
+  const { press } = useApp()
+  const found = useSignal<readonly string[] | null>(null)
+  const text = query.value.trim()
+  useEffect(() => {
+    if (text === '') {
+      found.value = null
+      return
+    }
+    let stale = false
+    void press.find(text).then((answer) => {
+      if (!stale) found.value = answer.ok ? answer.value : []
+    })
+    return () => {
+      stale = true
+    }
+  }, [text])
+  return found
+}
+
+const Filters = () => (
+  <div class="filters">
+    {filterGroups.map(({ name, filters }) => (
+      <div key={name} class="row tight" role="group" aria-label={name}>
+        <span class="filter-name" aria-hidden="true">
+          {name}
+        </span>
+        {filters.map(({ id, word }) => (
+          <button
+            key={id}
+            type="button"
+            class="chip"
+            aria-pressed={chosen.value.has(id)}
+            onClick={() => {
+              const next = new Set(chosen.value)
+              if (!next.delete(id)) next.add(id)
+              chosen.value = next
+            }}
+          >
+            {word}
+          </button>
+        ))}
+      </div>
+    ))}
+  </div>
+)
+
+const Card = ({ solid, onPick }: { solid: SolidFacts; onPick: () => void }) => {
+  const { workshop } = useApp()
+  const known = workshop.known.value.get(factsKey(solid.id, 'nonzero'))
+  return (
+    <li>
+      <button
+        type="button"
+        class="card"
+        aria-pressed={looked.value === solid.id}
+        data-solid={solid.id}
+        onClick={onPick}
+      >
+        <Picture solid={solid.id} size={136} />
+        <span class="card-name">{capital(solid.name)}</span>
+        <span class="soft figures">
+          No. {solid.index}, {counted(solid.faces, 'face')}
+        </span>
+        <span class="card-facts figures">
+          {known ? (
+            sayKnown(known).map(([name, value]) => (
+              <span key={name}>
+                {value} <span class="soft">{name}</span>
+              </span>
+            ))
+          ) : (
+            <span class="soft">{solid.vertexConfiguration}</span>
+          )}
+        </span>
+      </button>
+    </li>
+  )
+}
+
+const Looked = ({ solid }: { solid: SolidFacts }) => {
+  const { press, workshop, router } = useApp()
+  const items = useSignal<readonly SceneItem[]>([])
+  const seen = solid.chiral ? hand.value : 'right'
+  useEffect(() => {
+    let stale = false
+    void press.faces(solid.id, seen, 'nonzero', defaultColours).then((answer) => {
+      if (!stale && answer.ok) items.value = answer.value
+    })
+    return () => {
+      stale = true
+    }
+  }, [solid.id, seen])
+  const options = useMemo(() => ({ backs: 'same' as const, centre: [0, 0, 0] as [number, number, number] }), [])
+  const known = workshop.known.value.get(factsKey(solid.id, 'nonzero'))
+  const isHere = workshop.choices.value.solid === solid.id
+  return (
+    <section class="looked" aria-label={capital(solid.name)} data-looked={solid.id}>
+      <h2 tabIndex={-1}>{capital(solid.name)}</h2>
+      <ModelView label={`The ${solid.name}, its raw faces`} items={items.value} options={options} />
+      {solid.chiral && (
+        <fieldset class="row tight">
+          <legend>Hand</legend>
+          {(['left', 'right'] as const).map((side) => (
+            <label key={side} class="choice">
+              <input
+                type="radio"
+                name="shelf-hand"
+                checked={hand.value === side}
+                onChange={() => {
+                  hand.value = side
+                }}
+              />
+              {side}
+            </label>
+          ))}
+        </fieldset>
+      )}
+      <button
+        type="button"
+        class="primary"
+        onClick={() => {
+          workshop.take(solid.id, solid.chiral ? hand.value : workshop.choices.value.hand)
+          router.go('board')
+        }}
+      >
+        {isHere ? 'Back to the Board' : 'Take to the Board'}
+      </button>
+      <dl class="pairs figures">
+        <dt>Faces</dt>
+        <dd>{sayFaces(solid)}</dd>
+        <dt>Vertices, edges</dt>
+        <dd>
+          {solid.vertices}, {solid.edges}
+        </dd>
+        <dt>Vertex configuration</dt>
+        <dd>{solid.vertexConfiguration}</dd>
+        <dt>Wythoff symbol</dt>
+        <dd>{solid.wythoff}</dd>
+        <dt>Symmetry</dt>
+        <dd>{saySymmetry(solid.symmetry)}</dd>
+        <dt>Euler characteristic</dt>
+        <dd>{solid.euler}</dd>
+        <dt>Density</dt>
+        <dd>{solid.density ?? 'none'}</dd>
+        <dt>Sides</dt>
+        <dd>{solid.orientable ? 'two (orientable)' : 'one (not orientable)'}</dd>
+        <dt>Dihedral angles</dt>
+        <dd>
+          {solid.dihedralAngles.map(({ kinds, degrees }) => {
+            const [a, b] = kinds.map((kind) => solid.facesByKind.find(({ id }) => id === kind)?.name ?? '')
+            return <div key={`${a} ${b} ${degrees}`}>{`${a} to ${b} ${degreesText(degrees)}`}</div>
+          })}
+        </dd>
+        {sayKnown(known).map(([name, value]) => [
+          <dt key={name}>{capital(name)}</dt>,
+          <dd key={`${name} is`}>{value || <span class="soft">known once it is planned</span>}</dd>,
+        ])}
+        <dt>Edge at 250 mm</dt>
+        <dd>{figure(250 / (2 * solid.circumradius), 1)} mm</dd>
+      </dl>
+    </section>
+  )
+}
+
+export const Shelf = () => {
+  const { catalogue, workshop } = useApp()
+  const found = useFound()
+  const detail = useRef<HTMLDivElement>(null)
+  const shown = useComputed(() => {
+    const all = catalogue.value
+    const ids = found.value
+    const listed = ids ? ids.flatMap((id) => all.find((solid) => solid.id === id) ?? []) : all
+    return listed.filter((solid) => passes(solid, chosen.value))
+  })
+  const subject = catalogue.value.find(({ id }) => id === (looked.value ?? workshop.choices.value.solid))
+  const filtered = chosen.value.size > 0 || query.value.trim() !== ''
+  return (
+    <div class="shelf">
+      <section class="shelf-list" aria-label="Solids">
+        <div class="row search">
+          <label class="grow">
+            <span class="unseen">Find by name, number, vertex configuration or Wythoff symbol</span>
+            <input
+              type="search"
+              placeholder="Name, number, 3.5.3.5, 2 | 3 5"
+              value={query.value}
+              onInput={(event) => {
+                query.value = event.currentTarget.value
+              }}
+            />
+          </label>
+          <span class="soft figures" role="status">
+            {counted(shown.value.length, 'solid')}
+          </span>
+          {filtered && (
+            <button
+              type="button"
+              class="quiet"
+              onClick={() => {
+                chosen.value = new Set()
+                query.value = ''
+              }}
+            >
+              Show all
+            </button>
+          )}
+        </div>
+        <Filters />
+        {catalogue.value.length === 0 && <p class="soft">Constructing the solids</p>}
+        {catalogue.value.length > 0 && shown.value.length === 0 && (
+          <p>No solid fits. Take a word away, or search for part of a name.</p>
+        )}
+        <ul class="cards">
+          {shown.value.map((solid) => (
+            <Card
+              key={solid.id}
+              solid={solid}
+              onPick={() => {
+                looked.value = solid.id
+                // On a narrow screen the details stand above the list.
+                const box = detail.current!.getBoundingClientRect()
+                if (box.bottom < 0) detail.current!.scrollIntoView({ block: 'start' })
+              }}
+            />
+          ))}
+        </ul>
+      </section>
+      <div class="shelf-detail" ref={detail}>
+        {subject && <Looked key={subject.id} solid={subject} />}
+      </div>
+    </div>
+  )
+}

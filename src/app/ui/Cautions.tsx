@@ -1,0 +1,15 @@
+import { cautions, cautionsEnd } from '../words/craft'
+
+export const Cautions = () => (
+  <div class="cautions">
+    <dl>
+      {cautions.map(({ title, text }) => (
+        <div key={title}>
+          <dt>{title}</dt>
+          <dd>{text}</dd>
+        </div>
+      ))}
+    </dl>
+    <p>{cautionsEnd}</p>
+  </div>
+)

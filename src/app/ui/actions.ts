@@ -1,0 +1,46 @@
+/** What several stations do in the same way. */
+import { InputError } from '../../errors'
+import type { Planned } from '../state/workshop'
+import { buildFileText, fileNameOf, planFileText, readFileText } from '../storage/file'
+import type { AppContext } from './context'
+import { download } from './download'
+
+export const nameOfBuild = ({ workshop, solid }: AppContext): string =>
+  workshop.build.value.name || solid.value?.name || workshop.choices.value.solid
+
+export const savePlanFile = (app: AppContext, { plan }: Planned): void => {
+  download(`${fileNameOf(nameOfBuild(app))}.plan.json`, planFileText(plan), 'application/json')
+  app.announce('Plan saved to a file.')
+}
+
+export const saveBuildFile = async (app: AppContext): Promise<void> => {
+  const { workshop } = app
+  const text = await buildFileText(workshop.build.peek(), (key) => workshop.keeper.plan(key))
+  download(`${fileNameOf(nameOfBuild(app))}.build.json`, text, 'application/json')
+  app.announce('Build saved to a file.')
+}
+
+/** Opens a plan or build file as a build of its own; what is open now stays in the list of builds. */
+export const openFile = async (app: AppContext, file: File): Promise<boolean> => {
+  try {
+    const opened = readFileText(file.name, await file.text())
+    const plans = opened.kind === 'plan' ? [opened.plan] : Object.values(opened.plans)
+    for (const plan of plans) {
+      if (!app.catalogue.value.some(({ id }) => id === plan.model.id))
+        throw new InputError(`${file.name} is of a solid that this program does not know: ${plan.model.id}.`, file.name)
+      const answer = await app.press.check(plan)
+      if (!answer.ok) throw new InputError(`${file.name} cannot be used: ${answer.refusal.message}`, file.name)
+      const failed = answer.value.filter(({ ok }) => !ok)
+      if (failed.length > 0) {
+        const [first] = failed
+        app.trouble.value = `${file.name} does not keep its promises (${first!.name}: ${first!.detail}). It is open, but compute the plan again before you print.`
+      }
+    }
+    await app.workshop.openFile(opened)
+    app.announce(`${file.name} is open.`)
+    return true
+  } catch (error) {
+    app.trouble.value = error instanceof InputError ? error.message : `${file.name} cannot be read: ${String(error)}`
+    return false
+  }
+}

@@ -1,0 +1,32 @@
+/** Facts of a solid as the Shelf says them. */
+import type { SolidFacts } from '../../worker'
+import type { KnownFacts } from '../storage/types'
+import { heightForWidth, narrowest } from './craft'
+import { counted, figure, hoursText, listed } from './figures'
+
+const symmetryWords: Readonly<Record<string, string>> = {
+  T_d: 'full tetrahedral',
+  T: 'tetrahedral, rotations only',
+  O_h: 'full octahedral',
+  O: 'octahedral, rotations only',
+  I_h: 'full icosahedral',
+  I: 'icosahedral, rotations only',
+}
+
+export const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1)
+
+export const saySymmetry = (symbol: string): string =>
+  symmetryWords[symbol] ? `${symmetryWords[symbol]} (${symbol})` : symbol
+
+export const sayFaces = ({ facesByKind }: SolidFacts): string =>
+  listed(facesByKind.map(({ name, count }) => counted(count, name)))
+
+/** Least height at which the narrowest panel is wide enough for fingers. */
+export const leastHeight = (known: KnownFacts): number => heightForWidth(narrowest.fingers, known.narrowest)
+
+/** Panels, hours, least height: the three facts of a card, as far as a plan has been computed. */
+export const sayKnown = (known: KnownFacts | undefined): readonly [string, string][] => [
+  ['panels', known ? String(known.panels) : ''],
+  ['work', known ? `${hoursText(known.hours)} at ${figure(known.heightMm)} mm` : ''],
+  ['least height', known ? `${leastHeight(known)} mm` : ''],
+]

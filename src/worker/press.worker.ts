@@ -1,0 +1,55 @@
+/** Draws: pictures of solids, pages, and the PDF. */
+import { expose, transfer } from 'comlink'
+import { type DrawingPage, drawPlan } from '../drawing'
+import { pageToSvg, writePdf } from '../output'
+import { validatePlan } from '../plan/validate'
+import { faceItems, renderThumbnail } from '../preview/thumbnail'
+import { buildSolid, findSolids, listSolids } from '../solids'
+import type { Solid } from '../solids/types'
+import { answer, answerLater } from './answer'
+import type { PressApi } from './protocol'
+
+const kept = new Map<string, DrawingPage[]>()
+const keepAtMost = 4
+
+const coloursOf = (solid: Solid, colours: Readonly<Record<string, string>>): string[] =>
+  solid.kinds.map(({ name }) => colours[name] ?? '#c8c2b8')
+
+const api: PressApi = {
+  catalogue: () => answer(() => [...listSolids()]),
+  find: (query) => answer(() => findSolids(query).map(({ id }) => id)),
+  faces: (id, hand, fill, colours) =>
+    answer(() => {
+      const solid = buildSolid(id, hand)
+      return faceItems(solid, coloursOf(solid, colours), fill).map((item) => ({
+        ...item,
+        kind: solid.kinds[Number(item.kind)]!.name,
+      }))
+    }),
+  picture: (id, colours, size) => {
+    const made = answer(() => {
+      const solid = buildSolid(id)
+      return renderThumbnail(faceItems(solid, coloursOf(solid, colours)), { size, direction: [0.42, 0.31, 1] })
+    })
+    return made.ok ? transfer(made, [made.value.data.buffer]) : made
+  },
+  pages: (key, plan, choices) =>
+    answer(() => {
+      const pages = drawPlan(plan, choices)
+      kept.delete(key)
+      kept.set(key, pages)
+      for (const old of [...kept.keys()].slice(0, -keepAtMost)) kept.delete(old)
+      return pages.map(({ title, widthMm, heightMm, pieces }) => ({ title, widthMm, heightMm, pieces }))
+    }),
+  page: (key, index) =>
+    answer(() => {
+      const page = kept.get(key)?.[index]
+      return page ? pageToSvg(page) : null
+    }),
+  check: (plan) => answer(() => validatePlan(plan)),
+  pdf: async (plan, choices) => {
+    const made = await answerLater(() => writePdf(drawPlan(plan, choices)))
+    return made.ok ? transfer(made, [made.value.buffer]) : made
+  },
+}
+expose(api)
