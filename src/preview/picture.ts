@@ -69,6 +69,7 @@ export class Picture {
   private ghost: Layer = createLayer(0, 0)
   private pixels = new Uint8ClampedArray(0)
   private tones = new Uint8Array(0)
+  private filledFor: { stage: Stage; camera: Camera; view: string } | null = null
 
   /** What lies nearest at each sample; valid until the next `render`. */
   get samples(): Layer {
@@ -88,21 +89,13 @@ export class Picture {
       this.height = height
       this.solid = createLayer(width, height)
       this.ghost = createLayer(0, 0)
-    } else clearLayer(this.solid)
-
-    const scale = sampling.scale * sampling.samples
-    const vertices = projectAll(stage.positions, camera, scale)
-    const biases = itemBiases(stage.model.layer)
-    drawTriangles(this.solid, width, height, vertices, stage.solid, stage.model.vertexItem, biases)
-
-    const hasGhosts = stage.ghost.length > 0
-    if (hasGhosts) {
-      if (this.ghost.depth.length !== width * height) this.ghost = createLayer(width, height)
-      else clearLayer(this.ghost)
-      this.ghost.depth.set(this.solid.depth)
-      drawTriangles(this.ghost, width, height, vertices, stage.ghost, stage.model.vertexItem, biases)
+      this.filledFor = null
     }
-
+    const scale = sampling.scale * sampling.samples
+    const hasGhosts = stage.ghost.length > 0
+    this.fill(stage, camera, scale)
+    this.solid.line.fill(0)
+    this.ghost.line.fill(0)
     const inks = stage.lines.map((set, i) => this.drawSet(set, i + 1, stage, camera, scale))
     if (borders) {
       inks.push({ colour: parseHex(stage.theme.edge), alpha: 0.55 })
@@ -115,6 +108,25 @@ export class Picture {
     if (this.pixels.length !== 4 * columns * rows) this.pixels = new Uint8ClampedArray(4 * columns * rows)
     this.resolve(columns, rows, sampling, stage, inks, hasGhosts)
     return { width: columns, height: rows, data: this.pixels }
+  }
+
+  /** Fills the depth and code layers, unless only marks and lines have changed since they were filled last. */
+  private fill(stage: Stage, camera: Camera, scale: number): void {
+    const { model, positions, triangles } = stage.versions
+    const view = `${model} ${positions} ${triangles} ${camera.version} ${scale}`
+    const last = this.filledFor
+    if (last && last.stage === stage && last.camera === camera && last.view === view) return
+    this.filledFor = { stage, camera, view }
+    const { width, height } = this
+    const vertices = projectAll(stage.positions, camera, scale)
+    const biases = itemBiases(stage.model.layer)
+    clearLayer(this.solid)
+    drawTriangles(this.solid, width, height, vertices, stage.solid, stage.model.vertexItem, biases)
+    if (stage.ghost.length === 0) return
+    if (this.ghost.depth.length !== width * height) this.ghost = createLayer(width, height)
+    else clearLayer(this.ghost)
+    this.ghost.depth.set(this.solid.depth)
+    drawTriangles(this.ghost, width, height, vertices, stage.ghost, stage.model.vertexItem, biases)
   }
 
   private drawSet(set: LineSet, mark: number, stage: Stage, camera: Camera, scale: number): Ink {

@@ -269,7 +269,7 @@ export class Stage {
     const solid = (i: number): boolean => this.isSolid(i)
     const style = { colour: edge, dash: 0, depth: 'surface', thins: true } as const
     return [
-      { style: { ...style, width: 0.8, alpha: 0.45 }, ends: this.gatherEdges(solid, (c) => isFold(c)) },
+      { style: { ...style, width: 0.8, alpha: 0.6 }, ends: this.gatherEdges(solid, (c) => isFold(c)) },
       {
         style: { ...style, width: 1.1, alpha: grouped ? 0.95 : 0.75 },
         ends: this.gatherEdges(solid, (c) => !isFold(c)),

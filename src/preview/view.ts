@@ -68,6 +68,7 @@ class View implements Preview {
   private frame = 0
   private rest = 0
   private held = false
+  private dirty = true
   private sharp = false
   private disposed = false
   private turning: { from: Camera['rotation']; shift: Camera['shift']; to: Vec3; start: number; ms: number } | null =
@@ -107,17 +108,19 @@ class View implements Preview {
           clickMiddle: () => this.onPick(this.pickAt(this.camera.width / 2, this.camera.height / 2), 'click'),
           hover: (place) => {
             this.pointer = place
-            this.invalidate()
+            this.schedule()
           },
           holding: (isHeld) => {
             this.held = isHeld
-            if (!isHeld) this.invalidate()
+            if (isHeld) return
+            if (!this.sharp) this.invalidate()
+            else this.schedule()
           },
         },
         interactive,
       ),
     )
-    const focused = (): void => this.invalidate()
+    const focused = (): void => this.schedule()
     element.addEventListener('focus', focused)
     element.addEventListener('blur', focused)
     const watch = new ResizeObserver(() => this.resize())
@@ -259,14 +262,30 @@ class View implements Preview {
     this.camera.setSpread(this.stage.spread)
   }
 
+  /** The picture is out of date. */
   private invalidate(): void {
+    this.dirty = true
     this.sharp = false
-    if (this.frame === 0 && !this.disposed) this.frame = requestAnimationFrame((now) => this.draw(now))
+    this.schedule()
+  }
+
+  private schedule(): void {
+    if (this.frame === 0 && !this.disposed) this.frame = requestAnimationFrame((now) => this.step(now))
+  }
+
+  private step(now: number): void {
+    this.frame = 0
+    if (this.disposed) return
+    if (this.dirty) this.draw(now)
+    this.overlay.place(this.stage.labels(), (at) => this.camera.project(at))
+    this.tellHover()
+    if (this.turning) this.invalidate()
+    else if (!this.sharp && !this.held) this.sharpenLater()
+    if (this.sharp && this.frame === 0) for (const done of this.waiting.splice(0)) done()
   }
 
   private draw(now: number): void {
-    this.frame = 0
-    if (this.disposed) return
+    this.dirty = false
     this.turn(now)
     this.update()
     const { camera } = this
@@ -274,12 +293,7 @@ class View implements Preview {
     if (camera.width > 1 && camera.height > 1) {
       const moving = this.held || this.turning !== null || performance.now() < this.rest
       this.sharp = this.renderer.render(this.stage, camera, moving) || !moving
-      this.overlay.place(this.stage.labels(), (at) => camera.project(at))
-      this.tellHover()
     } else this.sharp = true
-    if (this.turning) this.invalidate()
-    else if (!this.sharp && !this.held) this.sharpenLater()
-    if (this.sharp && this.frame === 0) for (const done of this.waiting.splice(0)) done()
   }
 
   private sharpenTimer: ReturnType<typeof setTimeout> | undefined

@@ -21,14 +21,16 @@ export interface Met {
 
 export interface Cast {
   readonly nearest: Met | null
-  /** The answer hangs on rounding: the ray all but grazes an outline, or two items are met at the same depth. */
+  /** The ray all but touches an outline. */
+  readonly grazed: boolean
+  /** The answer hangs on rounding: grazed, or two items are met at the same depth. */
   readonly doubtful: boolean
 }
 
 /** @param margin relative closeness to an outline or to another hit that makes the answer doubtful */
 export const castRay = (items: readonly SceneItem[], ray: Ray, margin = 1e-6): Cast => {
   const hits: Met[] = []
-  let doubtful = false
+  let grazed = false
   items.forEach((item, index) => {
     const ring = item.rings[0]!
     if (ring.length === 3 && item.rings.length === 1 && !item.moreRings?.length) {
@@ -43,7 +45,7 @@ export const castRay = (items: readonly SceneItem[], ray: Ray, margin = 1e-6): C
       const q = cross(s, e1)
       const v = dot(ray.direction, q) / det
       const least = Math.min(u, v, 1 - u - v)
-      if (Math.abs(least) < margin) doubtful = true
+      if (Math.abs(least) < margin) grazed = true
       if (least >= 0) hits.push({ index, t: dot(e2, q) / det })
       return
     }
@@ -58,13 +60,13 @@ export const castRay = (items: readonly SceneItem[], ray: Ray, margin = 1e-6): C
     const here = inside([x, y])
     for (let k = 0; k < 8; k++) {
       const angle = (k * Math.PI) / 4
-      if (inside([x + margin * Math.cos(angle), y + margin * Math.sin(angle)]) !== here) doubtful = true
+      if (inside([x + margin * Math.cos(angle), y + margin * Math.sin(angle)]) !== here) grazed = true
     }
     if (here) hits.push({ index, t })
   })
   hits.sort((a, b) => a.t - b.t)
   const [first, second] = hits
   // Wider than the depth biases that decide between coincident panels.
-  if (first && second && second.t - first.t < 1e-4 * first.t) doubtful = true
-  return { nearest: first ?? null, doubtful }
+  const level = first !== undefined && second !== undefined && second.t - first.t < 1e-4 * first.t
+  return { nearest: first ?? null, grazed, doubtful: grazed || level }
 }

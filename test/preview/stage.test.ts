@@ -84,6 +84,45 @@ describe('a scene made ready', () => {
   })
 })
 
+test('a picture drawn again after any change is that of a fresh start, seed 5', () => {
+  const stage = new Stage()
+  stage.setScene(randomItems(25, seeded(5)))
+  const camera = new Camera()
+  camera.resize(60, 50)
+  const used = new Picture()
+  const changes: (() => void)[] = [
+    () => stage.setLit([{ groups: new Set([1, 2]) }]),
+    () => stage.setGhost(new Set([101, 102, 103])),
+    () => stage.setLit([]),
+    () => camera.orbit(0.3, 0.1),
+    () => stage.setExplode(0.4),
+    () => stage.setGhost(null),
+    () => stage.setVisibleKinds(new Set(['k1', 'k2'])),
+    () =>
+      stage.setSeams([
+        {
+          id: 1,
+          ends: [
+            [0, 0, 0],
+            [1, 1, 1],
+          ],
+        },
+      ]),
+    () => stage.setTheme({ accent: '#00ff00', edge: '#ff00ff' }),
+    () => stage.setScene(cubeItems()),
+    () => camera.resize(40, 44),
+  ]
+  const pictures = changes.map((change) => {
+    change()
+    stage.update()
+    camera.setSpread(stage.spread)
+    const again = used.render(stage, camera, { scale: 1, samples: 2 }).data.slice()
+    expect(again).toEqual(new Picture().render(stage, camera, { scale: 1, samples: 2 }).data)
+    return Buffer.from(again).toString('base64')
+  })
+  expect(new Set(pictures).size).toBe(changes.length)
+})
+
 describe('pulling apart', () => {
   const scenes: [string, SceneItem[]][] = [
     ['windows', windowItems()],

@@ -2,6 +2,7 @@ import { describe, expect, test } from 'vitest'
 import { Camera } from '../../src/preview/camera'
 import type { Pixels } from '../../src/preview/picture'
 import { faceItems, renderThumbnail } from '../../src/preview/thumbnail'
+import { buildSolid, listSolids } from '../../src/solids'
 import { castRay } from './ray-caster'
 import { cubeItems, greatDodecahedron, smallStellatedDodecahedron, twoTetrahedra } from './shapes'
 
@@ -79,5 +80,72 @@ describe('thumbnails', () => {
     }
     expect(blueIn([large, small])).toBe(0)
     expect(blueIn([small, large])).toBeGreaterThan(2000)
+  })
+})
+
+describe('all 75 uniform polyhedra', () => {
+  const ids = listSolids().map((facts) => facts.id)
+
+  test('there are 75', () => {
+    expect(ids.length).toBe(75)
+  })
+
+  test.each(['nonzero', 'evenodd'] as const)('each has its own picture that fills the square, fill %s', (fill) => {
+    const seen = new Set<string>()
+    for (const id of ids) {
+      const size = 64
+      const picture = renderThumbnail(faceItems(buildSolid(id), [...colours, '#9bbb59', '#c9b458'], fill), { size })
+      let covered = 0
+      let reach = 0
+      for (let y = 0; y < size; y++)
+        for (let x = 0; x < size; x++)
+          if (alphaAt(picture, x, y) > 0) {
+            covered++
+            reach = Math.max(reach, Math.hypot(x + 0.5 - size / 2, y + 0.5 - size / 2))
+          }
+      // The tetrahedron covers least; no vertex of any solid leaves the circle that the view allows it.
+      expect({ id, covered: covered > 0.15 * size * size, reach: reach > 0.3 * size && reach < 0.5 * size }).toEqual({
+        id,
+        covered: true,
+        reach: true,
+      })
+      seen.add(Buffer.from(picture.data).toString('base64'))
+    }
+    expect(seen.size).toBe(75)
+  })
+
+  // Two that look through themselves, one with coplanar faces, one of density 37, one with faces through the centre.
+  const hard = [
+    'great-retrosnub-icosidodecahedron',
+    'great-dirhombicosidodecahedron',
+    'small-retrosnub-icosicosidodecahedron',
+    'octahemioctahedron',
+    'great-truncated-icosidodecahedron',
+  ]
+  test.each(hard)('%s covers what an independent ray caster meets, both fill rules', (id) => {
+    for (const fill of ['nonzero', 'evenodd'] as const) {
+      const solid = buildSolid(id)
+      const items = faceItems(solid, colours, fill)
+      const size = 24
+      const picture = renderThumbnail(items, { size, samples: 1 })
+      const camera = new Camera()
+      camera.resize(size, size)
+      const radius = Math.hypot(...solid.vertices[0]!)
+      const scaled = (v: readonly number[]): [number, number, number] => [
+        v[0]! * radius,
+        v[1]! * radius,
+        v[2]! * radius,
+      ]
+      let compared = 0
+      for (let y = 0; y < size; y++)
+        for (let x = 0; x < size; x++) {
+          const { origin, direction } = camera.ray(x + 0.5, y + 0.5)
+          const { nearest, grazed } = castRay(items, { origin: scaled(origin), direction: scaled(direction) })
+          if (grazed) continue
+          compared++
+          expect({ x, y, alpha: alphaAt(picture, x, y) }).toEqual({ x, y, alpha: nearest ? 255 : 0 })
+        }
+      expect(compared).toBeGreaterThan(0.9 * size * size)
+    }
   })
 })

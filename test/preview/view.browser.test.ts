@@ -333,6 +333,32 @@ test('when the browser takes the WebGL context away, the z-buffer goes on with t
   expect(strays / picture.length).toBeLessThan(0.01)
 })
 
+test('moving the pointer over the model paints nothing; lighting paints once', async () => {
+  const page = await openScene('no-3d', 'random')
+  await page.evaluate(() => {
+    const { prototype } = CanvasRenderingContext2D
+    const put = prototype.putImageData as (image: ImageData, x: number, y: number) => void
+    Object.assign(window, { painted: 0 })
+    prototype.putImageData = function (this: CanvasRenderingContext2D, image: ImageData, x: number, y: number) {
+      ;(window as unknown as { painted: number }).painted++
+      put.call(this, image, x, y)
+    }
+  })
+  const painted = (): Promise<number> => page.evaluate(() => (window as unknown as { painted: number }).painted)
+  for (let x = 150; x < 450; x += 10) await page.mouse.move(x, 240)
+  await page.mouse.down()
+  await page.mouse.up()
+  await twoFrames(page)
+  expect((await picks(page)).filter((p) => p.event === 'hover').length).toBeGreaterThan(3)
+  expect(await painted()).toBe(0)
+  await page.evaluate(() => {
+    window.bench.view.setLit({ groups: new Set([1]) })
+    window.bench.view.setSeams([])
+    return window.bench.view.settled()
+  })
+  expect(await painted()).toBe(1)
+})
+
 test('mode "canvas" never asks for WebGL, and a view that is not interactive is an image', async () => {
   const page = await openScene('webgl', 'cube', { mode: 'canvas', interactive: false, direction: [0, 0, 1] })
   const seen = await page.evaluate(() => {
