@@ -1,0 +1,7 @@
+/** From choices to a plan, and the plan file. */
+export { checkChoices, greatestHeightMm, leastHeightMm, usualChoices } from './choices'
+export { makePlan, planSolid } from './pipeline'
+export { planSchema } from './schema'
+export { StageCache } from './stages'
+export type * from './types'
+export { validatePlan } from './validate'

@@ -1,0 +1,154 @@
+/**
+ * Outlines on a raster, row by row as runs of cells. A mask holds every cell that the outline touches, so masks that share
+ * no cell belong to outlines that do not overlap.
+ */
+import type { Ring2, Vec2 } from '../geometry/vec2'
+
+export interface Mask {
+  /** In cells. */
+  readonly width: number
+  readonly height: number
+  /** Runs of row r: from runs[2k] up to, not including, runs[2k + 1], for k from starts[r] to starts[r + 1]. */
+  readonly runs: Uint16Array
+  readonly starts: Uint32Array
+  readonly cells: number
+  /** Rows, fullest first: the order in which a clash shows soonest. */
+  readonly rows: Uint16Array
+}
+
+/**
+ * @param rings region in mm (nonzero), anywhere in the first quadrant
+ * @param cellMm side of a cell
+ */
+export const rasterize = (rings: readonly Ring2[], cellMm: number): Mask => {
+  let right = 0
+  let top = 0
+  for (const ring of rings)
+    for (const [x, y] of ring) {
+      right = Math.max(right, x)
+      top = Math.max(top, y)
+    }
+  const width = Math.max(1, Math.ceil(right / cellMm - 1e-9))
+  const height = Math.max(1, Math.ceil(top / cellMm - 1e-9))
+  const taken = new Uint8Array(width * height)
+  const mark = (row: number, from: number, to: number): void => {
+    const a = Math.max(0, Math.floor(from / cellMm))
+    const b = Math.min(width - 1, Math.floor(to / cellMm))
+    if (a <= b) taken.fill(1, row * width + a, row * width + b + 1)
+  }
+  // Every cell that an edge passes through.
+  for (const ring of rings)
+    ring.forEach((a, i) => {
+      const b = ring[(i + 1) % ring.length]!
+      const [low, high] = a[1] <= b[1] ? [a, b] : [b, a]
+      const first = Math.max(0, Math.floor(low[1] / cellMm))
+      const last = Math.min(height - 1, Math.floor(high[1] / cellMm))
+      for (let row = first; row <= last; row++) {
+        const s = at(low, high, row * cellMm)
+        const t = at(low, high, (row + 1) * cellMm)
+        mark(row, Math.min(s, t), Math.max(s, t))
+      }
+    })
+  // And every cell whose bottom edge is inside.
+  for (let row = 1; row < height; row++) {
+    const crossings: { x: number; turn: number }[] = []
+    const y = row * cellMm
+    for (const ring of rings)
+      ring.forEach((a, i) => {
+        const b = ring[(i + 1) % ring.length]!
+        if (a[1] <= y === b[1] <= y) return
+        crossings.push({ x: at(a, b, y), turn: a[1] <= y ? 1 : -1 })
+      })
+    crossings.sort((p, q) => p.x - q.x)
+    let winding = 0
+    for (let i = 0; i + 1 < crossings.length; i++) {
+      winding += crossings[i]!.turn
+      if (winding !== 0) mark(row, crossings[i]!.x, crossings[i + 1]!.x)
+    }
+  }
+  const runs: number[] = []
+  const starts: number[] = [0]
+  const full: number[] = []
+  for (let row = 0; row < height; row++) {
+    let count = 0
+    for (let x = 0; x < width; x++) {
+      if (!taken[row * width + x]) continue
+      const from = x
+      while (x < width && taken[row * width + x]) x++
+      runs.push(from, x)
+      count += x - from
+    }
+    starts.push(runs.length / 2)
+    full.push(count)
+  }
+  const rows = full.map((_, row) => row).sort((p, q) => full[q]! - full[p]! || p - q)
+  return {
+    width,
+    height,
+    runs: Uint16Array.from(runs),
+    starts: Uint32Array.from(starts),
+    cells: full.reduce((sum, n) => sum + n, 0),
+    rows: Uint16Array.from(rows),
+  }
+}
+
+/** x where the segment a–b reaches height y, kept within the segment. */
+const at = (a: Vec2, b: Vec2, y: number): number => {
+  if (a[1] === b[1]) return y <= a[1] ? a[0] : b[0]
+  const t = Math.max(0, Math.min(1, (y - a[1]) / (b[1] - a[1])))
+  return a[0] + t * (b[0] - a[0])
+}
+
+/** The cells of one sheet that are taken, as running counts along each row, so that a run is tested by two look-ups. */
+export class Board {
+  /** before[row · (width + 1) + x]: taken cells of the row left of x. */
+  private readonly before: Uint16Array
+  private readonly open: Uint16Array
+  free: number
+
+  constructor(
+    readonly width: number,
+    readonly height: number,
+  ) {
+    this.before = new Uint16Array((width + 1) * height)
+    this.open = new Uint16Array(width)
+    this.free = width * height
+  }
+
+  /** The least x ≤ lastX at which the mask, its lowest row at y, meets no taken cell; −1 if there is none. */
+  firstFree(mask: Mask, y: number, lastX: number): number {
+    const { before, open } = this
+    const { runs, starts } = mask
+    let left = lastX + 1
+    for (let x = 0; x < left; x++) open[x] = x
+    for (let k = 0; k < mask.height && left > 0; k++) {
+      const row = mask.rows[k]!
+      const base = (y + row) * (this.width + 1)
+      for (let r = starts[row]!; r < starts[row + 1]!; r++) {
+        const from = base + runs[2 * r]!
+        const to = base + runs[2 * r + 1]!
+        let kept = 0
+        for (let i = 0; i < left; i++) {
+          const x = open[i]!
+          if (before[from + x] === before[to + x]) open[kept++] = x
+        }
+        left = kept
+      }
+    }
+    return left > 0 ? open[0]! : -1
+  }
+
+  put(mask: Mask, x: number, y: number): void {
+    const { before, width } = this
+    for (let row = 0; row < mask.height; row++) {
+      const base = (y + row) * (width + 1)
+      for (let r = mask.starts[row]!; r < mask.starts[row + 1]!; r++) {
+        const from = x + mask.runs[2 * r]!
+        const to = x + mask.runs[2 * r + 1]!
+        // The cells are free, so the counts to the right all grow by the same.
+        for (let i = from + 1; i <= width; i++) before[base + i]! += Math.min(i, to) - from
+      }
+    }
+    this.free -= mask.cells
+  }
+}
