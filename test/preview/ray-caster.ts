@@ -4,7 +4,7 @@
  * storage ray-triangle intersection", Journal of Graphics Tools 2(1), 1997; other rings by the winding number of the
  * point where the line meets the plane.
  */
-import { windingNumber } from '../../src/geometry/vec2'
+import { type Vec2, windingNumber } from '../../src/geometry/vec2'
 import { add, cross, dot, planeFrame, scale, sub, type Vec3 } from '../../src/geometry/vec3'
 import type { SceneItem } from '../../src/preview/types'
 
@@ -27,46 +27,63 @@ export interface Cast {
   readonly doubtful: boolean
 }
 
-/** @param margin relative closeness to an outline or to another hit that makes the answer doubtful */
-export const castRay = (items: readonly SceneItem[], ray: Ray, margin = 1e-6): Cast => {
-  const hits: Met[] = []
-  let grazed = false
-  items.forEach((item, index) => {
-    const ring = item.rings[0]!
-    if (ring.length === 3 && item.rings.length === 1 && !item.moreRings?.length) {
-      const [a, b, c] = ring as [Vec3, Vec3, Vec3]
-      const e1 = sub(b, a)
-      const e2 = sub(c, a)
-      const p = cross(ray.direction, e2)
-      const det = dot(e1, p)
-      if (det === 0) return
-      const s = sub(ray.origin, a)
-      const u = dot(s, p) / det
-      const q = cross(s, e1)
-      const v = dot(ray.direction, q) / det
-      const least = Math.min(u, v, 1 - u - v)
-      if (Math.abs(least) < margin) grazed = true
-      if (least >= 0) hits.push({ index, t: dot(e2, q) / det })
-      return
-    }
-    const { u, v } = planeFrame(item.normal)
-    const t = dot(sub(ring[0]!, ray.origin), item.normal) / dot(ray.direction, item.normal)
-    const at = add(ray.origin, scale(ray.direction, t))
-    const flat = (p: Vec3): [number, number] => [dot(p, u), dot(p, v)]
-    const inside = ([x, y]: [number, number]): boolean =>
-      [item.rings, ...(item.moreRings ?? [])].flat().reduce((sum, r) => sum + windingNumber(r.map(flat), [x, y]), 0) !==
-      0
-    const [x, y] = flat(at)
-    const here = inside([x, y])
-    for (let k = 0; k < 8; k++) {
-      const angle = (k * Math.PI) / 4
-      if (inside([x + margin * Math.cos(angle), y + margin * Math.sin(angle)]) !== here) grazed = true
-    }
-    if (here) hits.push({ index, t })
+type Meet = (ray: Ray) => { t: number; isHit: boolean; grazed: boolean }
+
+const triangle =
+  ([a, b, c]: readonly [Vec3, Vec3, Vec3], margin: number): Meet =>
+  (ray) => {
+    const e1 = sub(b, a)
+    const e2 = sub(c, a)
+    const p = cross(ray.direction, e2)
+    const det = dot(e1, p)
+    if (det === 0) return { t: 0, isHit: false, grazed: true }
+    const s = sub(ray.origin, a)
+    const u = dot(s, p) / det
+    const q = cross(s, e1)
+    const v = dot(ray.direction, q) / det
+    const least = Math.min(u, v, 1 - u - v)
+    return { t: dot(e2, q) / det, isHit: least >= 0, grazed: Math.abs(least) < margin }
+  }
+
+const polygon = (item: SceneItem, margin: number): Meet => {
+  const { u, v } = planeFrame(item.normal)
+  const corner = item.rings[0]![0]!
+  const flat = (p: Vec3): Vec2 => [dot(sub(p, corner), u), dot(sub(p, corner), v)]
+  const rings = [item.rings, ...(item.moreRings ?? [])].flat().map((ring) => ring.map(flat))
+  const reach = Math.max(...rings.flat().map(([x, y]) => Math.hypot(x, y)))
+  const inside = (p: Vec2): boolean => rings.reduce((sum, ring) => sum + windingNumber(ring, p), 0) !== 0
+  return (ray) => {
+    const t = dot(sub(corner, ray.origin), item.normal) / dot(ray.direction, item.normal)
+    const [x, y] = flat(add(ray.origin, scale(ray.direction, t)))
+    if (!(Math.hypot(x, y) < 1.01 * reach)) return { t, isHit: false, grazed: false }
+    const isHit = inside([x, y])
+    const grazed = [0, 1, 2, 3, 4].some((k) => {
+      const angle = (k * 2 * Math.PI) / 5
+      return inside([x + margin * Math.cos(angle), y + margin * Math.sin(angle)]) !== isHit
+    })
+    return { t, isHit, grazed }
+  }
+}
+
+/** @param margin closeness to an outline that makes the answer doubtful */
+export const rayCaster = (items: readonly SceneItem[], margin = 1e-6): ((ray: Ray) => Cast) => {
+  const meets = items.map((item): Meet => {
+    const [a, b, c] = item.rings[0]!
+    const isTriangle = item.rings.length === 1 && item.rings[0]!.length === 3 && !item.moreRings?.length
+    return isTriangle ? triangle([a!, b!, c!], margin) : polygon(item, margin)
   })
-  hits.sort((a, b) => a.t - b.t)
-  const [first, second] = hits
-  // Wider than the depth biases that decide between coincident panels.
-  const level = first !== undefined && second !== undefined && second.t - first.t < 1e-4 * first.t
-  return { nearest: first ?? null, grazed, doubtful: grazed || level }
+  return (ray) => {
+    const hits: Met[] = []
+    let grazed = false
+    meets.forEach((meet, index) => {
+      const met = meet(ray)
+      if (met.grazed) grazed = true
+      if (met.isHit) hits.push({ index, t: met.t })
+    })
+    hits.sort((a, b) => a.t - b.t)
+    const [first, second] = hits
+    // Wider than the depth biases that decide between coincident panels.
+    const level = first !== undefined && second !== undefined && second.t - first.t < 1e-4 * first.t
+    return { nearest: first ?? null, grazed, doubtful: grazed || level }
+  }
 }
