@@ -83,54 +83,85 @@ const withoutNeedlessDiagonals = (faces: number[][], points: readonly Vec2[]): n
 const rotated = (list: readonly number[], start: number): number[] =>
   list.map((_, i) => list[(start + i) % list.length]!)
 
-export const movePart = (part: ConvexPart, m: Motion2): ConvexPart => {
-  const out = new Float64Array(part.length)
-  for (let i = 0; i < part.length; i += 2) {
-    const x = part[i]!
-    const y = part[i + 1]!
-    out[i] = m.c * x - m.s * y + m.x
-    out[i + 1] = m.s * x + m.c * y + m.y
+/** Writes the points of `from` (x0, y0, …), moved, into `to` from place `at` on. */
+export const moveInto = (to: Float64Array, at: number, from: Float64Array, m: Motion2): void => {
+  const { c, s, x, y } = m
+  for (let i = 0; i < from.length; i += 2) {
+    const px = from[i]!
+    const py = from[i + 1]!
+    to[at + i] = c * px - s * py + x
+    to[at + i + 1] = s * px + c * py + y
   }
-  return out
 }
 
-/** Whether a side of `p` has all of `q` on its outer side, but for `slack` mm. */
-const sideSeparates = (p: ConvexPart, q: ConvexPart, slack: number): boolean => {
-  const n = p.length
-  for (let i = n - 2, j = 0; j < n; i = j, j += 2) {
-    const x = p[i]!
-    const y = p[i + 1]!
-    const ex = p[j]! - x
-    const ey = p[j + 1]! - y
+/** Whether a side of the part p[p0 … p1) has all of q[q0 … q1) on its outer side, but for `slack`. */
+const sideSeparates = (
+  p: Float64Array,
+  p0: number,
+  p1: number,
+  q: Float64Array,
+  q0: number,
+  q1: number,
+  slack: number,
+): boolean => {
+  let x = p[p1 - 2]!
+  let y = p[p1 - 1]!
+  for (let j = p0; j < p1; j += 2) {
+    const nx = p[j]!
+    const ny = p[j + 1]!
+    const ex = nx - x
+    const ey = ny - y
     const limit = slack * Math.sqrt(ex * ex + ey * ey)
-    let k = 0
-    for (; k < q.length; k += 2) if (ex * (q[k + 1]! - y) - ey * (q[k]! - x) > limit) break
-    if (k === q.length) return true
+    let k = q0
+    for (; k < q1; k += 2) if (ex * (q[k + 1]! - y) - ey * (q[k]! - x) > limit) break
+    if (k === q1) return true
+    x = nx
+    y = ny
   }
   return false
 }
 
-/** Whether two convex parts lie side by side, going into each other by no more than `slack` mm (separating axes). */
-export const separated = (p: ConvexPart, q: ConvexPart, slack: number): boolean =>
-  sideSeparates(p, q, slack) || sideSeparates(q, p, slack)
+/**
+ * Whether two convex parts, given as stretches p[p0 … p1) and q[q0 … q1) of flat arrays, lie side by side, going into
+ * each other by no more than `slack` (separating axes).
+ */
+export const separated = (
+  p: Float64Array,
+  p0: number,
+  p1: number,
+  q: Float64Array,
+  q0: number,
+  q1: number,
+  slack: number,
+): boolean => sideSeparates(p, p0, p1, q, q0, q1, slack) || sideSeparates(q, q0, q1, p, p0, p1, slack)
 
 let scratchA = new Float64Array(256)
 let scratchB = new Float64Array(256)
 
-/** Area common to two convex parts, in the square of their unit (Sutherland and Hodgman, Comm. ACM 17, 1974). */
-export const overlapArea = (p: ConvexPart, q: ConvexPart): number => {
-  const room = 2 * (p.length + q.length)
+/**
+ * Area common to two convex parts p[p0 … p1) and q[q0 … q1), in the square of their unit (Sutherland and Hodgman, Comm.
+ * ACM 17, 1974).
+ */
+export const overlapArea = (
+  p: Float64Array,
+  p0: number,
+  p1: number,
+  q: Float64Array,
+  q0: number,
+  q1: number,
+): number => {
+  const room = 2 * (p1 - p0 + q1 - q0)
   if (scratchA.length < room) {
     scratchA = new Float64Array(room)
     scratchB = new Float64Array(room)
   }
   let from = scratchA
   let to = scratchB
-  from.set(p)
-  let n = p.length
-  for (let i = q.length - 2, j = 0; j < q.length && n > 0; i = j, j += 2) {
-    const x = q[i]!
-    const y = q[i + 1]!
+  let n = p1 - p0
+  for (let i = 0; i < n; i++) from[i] = p[p0 + i]!
+  let x = q[q1 - 2]!
+  let y = q[q1 - 1]!
+  for (let j = q0; j < q1 && n > 0; j += 2) {
     const ex = q[j]! - x
     const ey = q[j + 1]! - y
     let m = 0
@@ -158,6 +189,8 @@ export const overlapArea = (p: ConvexPart, q: ConvexPart): number => {
     const swap = from
     from = to
     to = swap
+    x = q[j]!
+    y = q[j + 1]!
   }
   if (n < 6) return 0
   // Relative to the first corner, so that far from the origin nothing is lost.

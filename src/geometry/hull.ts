@@ -6,12 +6,16 @@
  */
 export const convexHull = (points: ArrayLike<number>): Float64Array => {
   const n = points.length / 2
-  const order = new Int32Array(n)
-  for (let i = 0; i < n; i++) order[i] = 2 * i
-  order.sort((a, b) => points[a]! - points[b]! || points[a + 1]! - points[b + 1]!)
+  const order = byX(points, n)
   const hull = new Float64Array(2 * n + 2)
   let m = 0
-  const push = (x: number, y: number, floor: number): void => {
+  let floor = 0
+  for (let k = 0; k < 2 * n - 1; k++) {
+    // To the right along the lower side, then back along the upper one.
+    if (k === n) floor = m - 2
+    const i = order[k < n ? k : 2 * n - 2 - k]!
+    const x = points[i]!
+    const y = points[i + 1]!
     while (
       m >= floor + 4 &&
       (hull[m - 2]! - hull[m - 4]!) * (y - hull[m - 3]!) - (hull[m - 1]! - hull[m - 3]!) * (x - hull[m - 4]!) <= 0
@@ -20,10 +24,28 @@ export const convexHull = (points: ArrayLike<number>): Float64Array => {
     hull[m++] = x
     hull[m++] = y
   }
-  for (let i = 0; i < n; i++) push(points[order[i]!]!, points[order[i]! + 1]!, 0)
-  const floor = m - 2
-  for (let i = n - 2; i >= 0; i--) push(points[order[i]!]!, points[order[i]! + 1]!, floor)
   return hull.slice(0, Math.max(2, m - 2))
+}
+
+/** Places of the points in the array, by x and then y. Few points, nearly sorted in runs: insertion is fastest. */
+const byX = (points: ArrayLike<number>, n: number): Int32Array => {
+  const order = new Int32Array(n)
+  for (let i = 0; i < n; i++) order[i] = 2 * i
+  if (n > 96) return order.sort((a, b) => points[a]! - points[b]! || points[a + 1]! - points[b + 1]!)
+  for (let i = 1; i < n; i++) {
+    const p = order[i]!
+    const x = points[p]!
+    const y = points[p + 1]!
+    let k = i
+    for (; k > 0; k--) {
+      const q = order[k - 1]!
+      const d = points[q]! - x
+      if (d < 0 || (d === 0 && points[q + 1]! <= y)) break
+      order[k] = q
+    }
+    order[k] = p
+  }
+  return order
 }
 
 /** Size of the box round the points when they are turned by the angle counter-clockwise (its cosine and sine). */

@@ -3,7 +3,7 @@
  * the crease between them is laid flat.
  */
 import { BrokenPromise } from '../errors'
-import { type ConvexPart, convexParts } from '../geometry/convex'
+import { convexParts } from '../geometry/convex'
 import { distance2, type Motion2, motionBetween, type Vec2 } from '../geometry/vec2'
 import type { Skin } from '../skin/types'
 import { flattenPanels } from './flatten'
@@ -30,8 +30,9 @@ export interface Link {
 export interface PanelGraph {
   readonly edgeMm: number
   readonly flat: readonly FlatPanel[]
-  /** By panel: convex parts in the panel's own frame, mm. */
-  readonly parts: readonly (readonly ConvexPart[])[]
+  /** By panel: its convex parts in its own frame, x0, y0, x1, … in mm, part after part; and how many numbers each has. */
+  readonly parts: readonly Float64Array[]
+  readonly partSizes: readonly Int32Array[]
   /** By panel, mm². */
   readonly areas: readonly number[]
   /** By panel: face kind. */
@@ -74,10 +75,12 @@ export const panelGraph = (skin: Skin, edgeMm: number): PanelGraph => {
       innerAngle: crease.innerAngle,
     }
   })
+  const parts = flat.map((p) => convexParts(p.rings))
   return {
     edgeMm,
     flat,
-    parts: flat.map((p) => convexParts(p.rings)),
+    parts: parts.map((list) => Float64Array.from(list.flatMap((part) => [...part]))),
+    partSizes: parts.map((list) => Int32Array.from(list, (part) => part.length)),
     areas: skin.panels.map((p) => p.area * edgeMm * edgeMm),
     kinds: skin.panels.map((p) => p.kind),
     links,

@@ -31,91 +31,140 @@ export const foldWish = (link: Link): number => {
   return link.lengthMm * (opening < sharpDegrees ? 3 : 1)
 }
 
-interface State {
+/** The nets at one moment of the search. */
+class Nets {
   /** By panel. */
   readonly of: Patch[]
-}
+  /** All nets, in no particular but reproducible order. */
+  readonly list: Patch[]
+  private readonly place: Map<Patch, number>
 
-/** Merges along the given creases, in this order, whatever lies flat and fits. */
-const mergeAlong = (
-  of: Patch[],
-  links: readonly Link[],
-  fit: FitRectangle,
-  joining: (a: Patch, b: Patch, joined: Patch) => void = () => {},
-): void => {
-  for (const link of links) {
-    const a = of[link.sides[0].panel]!
-    const b = of[link.sides[1].panel]!
-    if (a === b) continue
-    const joined = joinPatches(a, b, link, fit)
-    if (!joined) continue
-    joining(a, b, joined)
-    for (const p of joined.panels) of[p] = joined
+  constructor(patches: readonly Patch[]) {
+    this.of = []
+    this.list = [...patches]
+    this.place = new Map(patches.map((p, i) => [p, i]))
+    for (const patch of patches) for (const p of patch.panels) this.of[p] = patch
+  }
+
+  replace(old: Iterable<Patch>, by: Iterable<Patch>): void {
+    for (const patch of old) {
+      const i = this.place.get(patch)!
+      const last = this.list.pop()!
+      this.place.delete(patch)
+      if (last === patch) continue
+      this.list[i] = last
+      this.place.set(last, i)
+    }
+    for (const patch of by) {
+      this.place.set(patch, this.list.push(patch) - 1)
+      for (const p of patch.panels) this.of[p] = patch
+    }
   }
 }
 
-const shapeCost = (patch: Patch, full: number): number => 1 + 0.5 * Math.sqrt(patch.area / full)
+/**
+ * Few nets; with as many, better one large and one small than two middling ones, as the small one may go next; and the
+ * creases that want it most as folds, which saves glue.
+ */
+const costOf = (patches: Iterable<Patch>, full: number, wishes: Float64Array): number => {
+  let sum = 0
+  for (const p of patches) {
+    sum += 1 + sizeWeight * Math.sqrt(p.area / full)
+    for (const fold of p.folds) sum -= wishes[fold]!
+  }
+  return sum
+}
+const sizeWeight = 0.5
+/** What a crease of mean wish is worth as a fold, in nets. */
+const foldWeight = 0.05
 
 /** @returns crease ids that fold, ascending */
 export const searchFolds = (graph: PanelGraph, options: SearchOptions, progress: Progress): number[] => {
   const { fit, perKind, rounds, seed } = options
   const allowed = graph.links.filter((l) => !perKind || graph.kinds[l.sides[0].panel] === graph.kinds[l.sides[1].panel])
-  const byWish = [...allowed].sort((a, b) => foldWish(b) - foldWish(a) || a.id - b.id)
-  const state: State = { of: graph.flat.map((_, i) => singlePatch(graph, i)) }
-  mergeAlong(state.of, byWish, fit)
-  const usable = new Set(allowed.map((l) => l.id))
+  const singles = graph.flat.map((_, i) => singlePatch(graph, i, fit))
+  const nets = new Nets(singles)
+  const merge = (links: readonly Link[], joining: (a: Patch, b: Patch, joined: Patch) => void): void => {
+    links.forEach((link, i) => {
+      if (i % 64 === 0) progress('pieces', done)
+      const a = nets.of[link.sides[0].panel]!
+      const b = nets.of[link.sides[1].panel]!
+      if (a === b) return
+      const joined = joinPatches(graph, a, b, link, fit)
+      if (!joined) return
+      joining(a, b, joined)
+      nets.replace([a, b], [joined])
+    })
+  }
+  let done = 0
+  merge(
+    [...allowed].sort((a, b) => foldWish(b) - foldWish(a) || a.id - b.id),
+    () => {},
+  )
+
   const random = seededRandom(seed)
   const full = fit.widthMm * fit.heightMm
-  const costOf = (patches: Iterable<Patch>): number => {
-    let sum = 0
-    for (const p of patches) sum += shapeCost(p, full)
-    return sum
-  }
-  let best = [...state.of]
-  let cost = costOf(new Set(state.of))
+  const floor = Math.max(1, Math.ceil(graph.areas.reduce((a, b) => a + b, 0) / full - 1e-9))
+  const usable = graph.links.map(() => false)
+  for (const l of allowed) usable[l.id] = true
+  const wishes = Float64Array.from(graph.links, foldWish)
+  const mean = wishes.reduce((a, b) => a + b, 0) / Math.max(1, wishes.length)
+  wishes.forEach((w, i) => {
+    wishes[i] = (foldWeight * w) / mean
+  })
+  let cost = costOf(nets.list, full, wishes)
+  let best = [...nets.list]
   let bestCost = cost
-  for (let round = 0; round < rounds; round++) {
-    if (round % 16 === 0) progress('pieces', round / rounds)
-    const heat = 0.3 * (1 - round / rounds) ** 2
-    const patches = [...new Set(state.of)]
-    if (patches.length < 2) break
-    const group = chooseGroup(patches, state.of, graph, random)
-    const undo = [...group]
-    const fresh = takeApart(group, state.of, graph, random)
-    const links = new Set<Link>()
-    for (const patch of group)
-      for (const p of patch.panels) for (const l of graph.linksOf[p]!) if (usable.has(l)) links.add(graph.links[l]!)
-    const order = [...links]
-      .map((link) => ({ link, key: foldWish(link) ** 0.5 * (0.2 + random.next()) }))
-      .sort((a, b) => b.key - a.key || a.link.id - b.link.id)
-      .map(({ link }) => link)
-    mergeAlong(state.of, order, fit, (a, b, joined) => {
+  for (let round = 0; round < rounds && best.length > floor; round++) {
+    done = round / rounds
+    const heat = startHeat * (1 - done) ** 2
+    const undo = chooseGroup(nets, graph, random)
+    const fresh = new Set(takeApart(undo, graph, singles, random))
+    nets.replace(undo, fresh)
+    const links = linksAround(undo, graph, usable, random)
+    merge(links, (a, b, joined) => {
       // A net from beside the group may be drawn in.
       for (const patch of [a, b]) if (!fresh.delete(patch)) undo.push(patch)
       fresh.add(joined)
     })
-    const change = costOf(fresh) - costOf(undo)
+    const change = costOf(fresh, full, wishes) - costOf(undo, full, wishes)
     if (change <= 0 || random.next() < Math.exp(-change / (heat + 1e-9))) {
       cost += change
       if (cost < bestCost - 1e-9) {
         bestCost = cost
-        best = [...state.of]
+        best = [...nets.list]
       }
-    } else for (const patch of undo) for (const p of patch.panels) state.of[p] = patch
+    } else nets.replace(fresh, undo)
   }
   progress('pieces', 1)
-  return [...new Set(best)].flatMap((p) => p.folds).sort((a, b) => a - b)
+  return best.flatMap((p) => p.folds).sort((a, b) => a - b)
+}
+const startHeat = 0.3
+
+/** All creases of the group's panels that may fold, in a random order that still prefers those that want to. */
+const linksAround = (
+  group: readonly Patch[],
+  graph: PanelGraph,
+  usable: readonly boolean[],
+  random: Random,
+): Link[] => {
+  const ids = new Set<number>()
+  for (const patch of group) for (const p of patch.panels) for (const l of graph.linksOf[p]!) if (usable[l]) ids.add(l)
+  return [...ids]
+    .map((id) => ({ link: graph.links[id]!, key: Math.sqrt(foldWish(graph.links[id]!)) * (0.2 + random.next()) }))
+    .sort((a, b) => b.key - a.key)
+    .map(({ link }) => link)
 }
 
 /** A net, small ones more likely, and a few of its neighbours. */
-const chooseGroup = (patches: readonly Patch[], of: readonly Patch[], graph: PanelGraph, random: Random): Patch[] => {
-  let first = patches[random.below(patches.length)]!
+const chooseGroup = ({ list, of }: Nets, graph: PanelGraph, random: Random): Patch[] => {
+  let first = list[random.below(list.length)]!
   for (let i = 0; i < 2; i++) {
-    const other = patches[random.below(patches.length)]!
+    const other = list[random.below(list.length)]!
     if (other.area < first.area) first = other
   }
   const group = [first]
-  const size = 2 + random.below(3)
+  const size = 2 + random.below(2)
   for (let tries = 0; tries < 12 && group.length < size; tries++) {
     const from = group[random.below(group.length)]!
     const panel = from.panels[random.below(from.panels.length)]!
@@ -127,15 +176,10 @@ const chooseGroup = (patches: readonly Patch[], of: readonly Patch[], graph: Pan
   return group
 }
 
-const takeApart = (group: readonly Patch[], of: Patch[], graph: PanelGraph, random: Random): Set<Patch> => {
-  const fresh = new Set<Patch>()
-  const wholly = random.next() < 0.3
-  for (const patch of group) {
-    const lose = wholly ? 1 : 0.1 + 0.5 * random.next()
-    for (const part of splitPatch(patch, () => random.next() >= lose, graph)) {
-      fresh.add(part)
-      for (const p of part.panels) of[p] = part
-    }
-  }
-  return fresh
+/** The group's nets, cut at some of their folds. */
+const takeApart = (group: readonly Patch[], graph: PanelGraph, singles: readonly Patch[], random: Random): Patch[] => {
+  return group.flatMap((patch) => {
+    const lose = 0.05 + 0.25 * random.next()
+    return splitPatch(patch, () => random.next() >= lose, graph, singles)
+  })
 }

@@ -31,6 +31,8 @@ export interface PiecesPlan {
 
 /** mm², what two panels may seem to overlap by: clipping rounds to 1e-5 mm, and panels touch along whole edges. */
 const touching = 1e-3
+/** mm², what a tab may seem to stick out by: its whole root lies on the outline of the panel behind. */
+const rootTouching = 5e-3
 /** mm: the gap that tabs keep in the flat, as far as it is promised. */
 const tabGap = 0.2
 
@@ -268,7 +270,7 @@ const tabsBehind: Test = function* ({ skin, pieces, tabs }) {
       })
       const upright = signedArea(ring) < 0 ? [...ring].reverse() : ring
       const out = differenceArea([upright], receiver.rings)
-      if (out > touching) yield `tab on crease ${tab.crease} sticks out of panel ${other} by ${out.toFixed(3)} mm²`
+      if (out > rootTouching) yield `tab on crease ${tab.crease} sticks out of panel ${other} by ${out.toFixed(3)} mm²`
       const list = onBack.get(other) ?? []
       for (const there of list)
         if (intersectionArea([upright], [there.ring]) > touching)
