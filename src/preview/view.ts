@@ -16,6 +16,7 @@ const restMs = 140
 export const createPreview = async (host: HTMLElement, options: PreviewOptions): Promise<Preview> => {
   const view = new View(host, options, await firstRenderer(options.mode ?? 'auto'))
   view.resize()
+  view.invalidate()
   return view
 }
 
@@ -238,8 +239,9 @@ class View implements Preview {
 
   resize(): void {
     const { clientWidth, clientHeight } = this.element
+    const { version } = this.camera
     this.camera.resize(Math.max(1, clientWidth), Math.max(1, clientHeight))
-    this.invalidate()
+    if (this.camera.version !== version) this.invalidate()
   }
 
   project(point: Vec3, item?: number): { x: number; y: number } {
@@ -263,7 +265,7 @@ class View implements Preview {
   }
 
   /** The picture is out of date. */
-  private invalidate(): void {
+  invalidate(): void {
     this.dirty = true
     this.sharp = false
     this.schedule()
