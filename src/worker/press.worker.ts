@@ -2,6 +2,7 @@
 import { expose, transfer } from 'comlink'
 import { type DrawingPage, drawPlan } from '../drawing'
 import { pageToSvg, writePdf } from '../output'
+import { planText } from '../plan/file'
 import { validatePlan } from '../plan/validate'
 import { faceItems, renderThumbnail } from '../preview/thumbnail'
 import { buildSolid, findSolids, listSolids } from '../solids'
@@ -39,7 +40,7 @@ const api: PressApi = {
       kept.delete(key)
       kept.set(key, pages)
       for (const old of [...kept.keys()].slice(0, -keepAtMost)) kept.delete(old)
-      return pages.map(({ title, widthMm, heightMm, pieces }) => ({ title, widthMm, heightMm, pieces }))
+      return pages.map(({ title, sheet, widthMm, heightMm, pieces }) => ({ title, sheet, widthMm, heightMm, pieces }))
     }),
   page: (key, index) =>
     answer(() => {
@@ -47,6 +48,7 @@ const api: PressApi = {
       return page ? pageToSvg(page) : null
     }),
   check: (plan) => answer(() => validatePlan(plan)),
+  planText: (plan) => answer(() => planText(plan)),
   pdf: async (plan, choices) => {
     const made = await answerLater(() => writePdf(drawPlan(plan, choices)))
     return made.ok ? transfer(made, [made.value.buffer]) : made

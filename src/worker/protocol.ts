@@ -29,6 +29,8 @@ export interface PlannerApi {
 
 export interface PageSummary {
   readonly title: string
+  /** Id of the sheet to cut, null for a page that is only read. */
+  readonly sheet: number | null
   readonly widthMm: number
   readonly heightMm: number
   /** Piece ids on the page; none on a page of text. */
@@ -55,5 +57,7 @@ export interface PressApi {
   page(key: string, index: number): Answer<string | null>
   /** The project's own check of a plan that came from a file; a plan of another shape is refused. */
   check(plan: Plan): Answer<PlanCheck[]>
+  /** The text of `plan.json`, the same bytes as the batch command writes. */
+  planText(plan: Plan): Answer<string>
   pdf(plan: Plan, choices: PlanChoices): Promise<Answer<Uint8Array>>
 }

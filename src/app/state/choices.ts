@@ -1,11 +1,11 @@
-/** What the builder decides, its limits, and how a choice is said in words. */
+/** What the builder decides, its limits (the plan room's own, held together by a test), and how a choice is said in words. */
 import type { PlanChoices } from '../../plan/types'
 
 export const limits = {
   heightMm: { least: 10, most: 2000, unit: 'mm', name: 'Height' },
-  marginMm: { least: 0, most: 50, unit: 'mm', name: 'Margin' },
-  gapMm: { least: 0.5, most: 20, unit: 'mm', name: 'Gap' },
-  grammage: { least: 40, most: 600, unit: 'g/m²', name: 'Card weight' },
+  marginMm: { least: 4, most: 40, unit: 'mm', name: 'Margin' },
+  gapMm: { least: 0, most: 20, unit: 'mm', name: 'Gap' },
+  grammage: { least: 60, most: 400, unit: 'g/m²', name: 'Card weight' },
 } as const
 export type NumberChoice = keyof typeof limits
 

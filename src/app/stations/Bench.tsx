@@ -217,8 +217,8 @@ const AtWork = ({ planned }: { planned: Planned }) => {
           </label>
         </section>
       </div>
-      <section class="do" aria-label="Glue">
-        <div class="grow">
+      <div class="do">
+        <section class="grow do-words" aria-label="What to do">
           <p class="sentence" data-testid="sentence">
             {sentence}
             {note !== '' && ` ${capital(note)}${/[.!?]$/.test(note) ? '' : '.'}`}
@@ -249,7 +249,7 @@ const AtWork = ({ planned }: { planned: Planned }) => {
               ))}
             </ul>
           )}
-        </div>
+        </section>
         <div class="do-buttons">
           {!isNext && next && (
             <button type="button" onClick={() => show(0)}>
@@ -263,7 +263,7 @@ const AtWork = ({ planned }: { planned: Planned }) => {
             {isGlued ? 'Not glued after all' : 'Glued'}
           </button>
         </div>
-      </section>
+      </div>
       <GluingLine order={order} glued={glued} shown={piece.id} next={next?.id ?? null} onShow={show} />
       <p class="figures soft so">
         {done} of {order.length} glued. About {hoursText(plan.docket.hours.glue * (1 - done / order.length))} of gluing

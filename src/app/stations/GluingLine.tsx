@@ -21,6 +21,7 @@ export const GluingLine = ({ order, glued, shown, next, onShow }: Props) => {
     if (mark) box.scrollLeft = mark.offsetLeft - box.clientWidth / 2
   }, [at])
   const show = (index: number): void => onShow(order[Math.min(order.length - 1, Math.max(0, index))]!.step)
+  const every = order.length <= 24 ? 1 : 10
   const steps: Record<string, number> = { ArrowLeft: -1, ArrowRight: 1, PageUp: -10, PageDown: 10 }
   return (
     <div
@@ -54,7 +55,7 @@ export const GluingLine = ({ order, glued, shown, next, onShow }: Props) => {
             title={`Piece ${piece.label}, ${state}`}
             onClick={() => show(i)}
           >
-            {(i === 0 || (i + 1) % 10 === 0) && <span aria-hidden="true">{i + 1}</span>}
+            {(i === 0 || (i + 1) % every === 0) && <span aria-hidden="true">{i + 1}</span>}
           </div>
         )
       })}

@@ -330,7 +330,7 @@ const Download = ({ planned }: { planned: Planned }) => {
         <button type="button" class="primary" disabled={busy.value} onClick={() => void writePdf()}>
           {busy.value ? 'Writing' : 'Download PDF'}
         </button>
-        <button type="button" onClick={() => savePlanFile(app, planned)}>
+        <button type="button" onClick={() => void savePlanFile(app, planned)}>
           Save plan.json
         </button>
       </div>

@@ -17,8 +17,6 @@ export type Opened =
   | { readonly kind: 'plan'; readonly plan: Plan; readonly choices: PlanChoices }
   | { readonly kind: 'build'; readonly build: Build; readonly plans: Readonly<Record<string, Plan>> }
 
-export const planFileText = (plan: Plan): string => `${JSON.stringify(plan)}\n`
-
 /** @param planOf finds a plan by key; a plan that is gone is left out */
 export const buildFileText = async (build: Build, planOf: (key: string) => Promise<Plan | null>): Promise<string> => {
   const plans: Record<string, Plan> = {}
@@ -92,7 +90,7 @@ const isBuild = (value: unknown): value is Build => {
 }
 
 /**
- * Reads what `planFileText` or `buildFileText` wrote. Whether a plan keeps its promises is not looked at here.
+ * Reads a plan.json, or what `buildFileText` wrote. Whether a plan keeps its promises is not looked at here.
  *
  * @throws InputError naming the file and what to do
  */
@@ -124,6 +122,7 @@ export const readFileText = (name: string, text: string): Opened => {
 export const fileNameOf = (name: string): string =>
   name
     .normalize('NFKD')
+    .replace(/\p{M}/gu, '')
     .toLowerCase()
     .replace(/[^a-z0-9]+/g, '-')
     .replace(/^-+|-+$/g, '') || 'build'

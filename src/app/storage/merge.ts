@@ -9,20 +9,26 @@ const mergeJobs = (theirs: Job, ours: Job): Job => ({
   changed: Math.max(theirs.changed, ours.changed),
 })
 
+/** Our past, then whatever of theirs is not in it, so that undo reaches everything. */
+const mergeHistories = (theirs: Build['history'], ours: Build['history']): Build['history'] => {
+  const known = new Set([...ours.past, ours.now].map((design) => JSON.stringify(design)))
+  const missing = [...theirs.past, theirs.now].filter((design) => !known.has(JSON.stringify(design)))
+  return missing.length === 0 ? ours : { ...ours, past: [...ours.past, ...missing] }
+}
+
 /**
  * Our choices win, theirs are one step of undo away. What either tab glued counts as glued.
  *
  * @param theirs as the store holds it, with the newer revision
  */
 export const mergeBuilds = (theirs: Build, ours: Build): Build => {
-  const same = JSON.stringify(theirs.history.now) === JSON.stringify(ours.history.now)
   const jobs = ours.jobs.map((job) => {
     const other = theirs.jobs.find(({ id }) => id === job.id)
     return other ? mergeJobs(other, job) : job
   })
   return {
     ...ours,
-    history: same ? ours.history : { ...ours.history, past: [...ours.history.past, theirs.history.now] },
+    history: mergeHistories(theirs.history, ours.history),
     jobs: [...jobs, ...theirs.jobs.filter(({ id }) => !ours.jobs.some((job) => job.id === id))],
     job: ours.job ?? theirs.job,
     changed: Math.max(theirs.changed, ours.changed),

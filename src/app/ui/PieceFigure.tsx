@@ -35,7 +35,7 @@ export const PieceFigure = ({ plan, piece, tints, now, strong }: Props) => {
       viewBox={`${box.x - pad} ${box.y - pad} ${box.width + 2 * pad} ${box.height + 2 * pad}`}
       data-testid="piece-figure"
     >
-      <path d={path(drawn.tabs)} class="tab" stroke-width={unit} />
+      <path d={path(drawn.tabs)} class="tab" />
       {drawn.panels.map(({ panel, rings }) => (
         <path key={panel} d={path(rings)} fill={colourOf(colours.get(panel) ?? '', tints)} fill-rule="evenodd" />
       ))}
@@ -68,7 +68,13 @@ export const PieceFigure = ({ plan, piece, tints, now, strong }: Props) => {
               <line x1={from[0]} y1={from[1]} x2={to[0]} y2={to[1]} stroke-width={(strong === crease ? 7 : 4) * unit} />
             )}
             {(isNow || seams.length < 60) && (
-              <text x={at[0]} y={at[1]} font-size={text} text-anchor="middle" dominant-baseline="central">
+              <text
+                x={at[0]}
+                y={at[1]}
+                font-size={isNow ? 1.3 * text : text}
+                text-anchor="middle"
+                dominant-baseline="central"
+              >
                 {label}
               </text>
             )}

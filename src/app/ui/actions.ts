@@ -1,22 +1,25 @@
 /** What several stations do in the same way. */
 import { InputError } from '../../errors'
 import type { Planned } from '../state/workshop'
-import { buildFileText, fileNameOf, planFileText, readFileText } from '../storage/file'
+import { buildFileText, fileNameOf, readFileText } from '../storage/file'
 import type { AppContext } from './context'
 import { download } from './download'
 
 export const nameOfBuild = ({ workshop, solid }: AppContext): string =>
   workshop.build.value.name || solid.value?.name || workshop.choices.value.solid
 
-export const savePlanFile = (app: AppContext, { plan }: Planned): void => {
-  download(`${fileNameOf(nameOfBuild(app))}.plan.json`, planFileText(plan), 'application/json')
-  app.announce('Plan saved to a file.')
+export const savePlanFile = async (app: AppContext, { plan }: Planned): Promise<void> => {
+  const answer = await app.press.planText(plan)
+  if (answer.ok) {
+    download(`${fileNameOf(nameOfBuild(app))}-plan.json`, answer.value, 'application/json')
+    app.announce('Plan saved to a file.')
+  } else app.trouble.value = `The plan could not be written: ${answer.refusal.message}`
 }
 
 export const saveBuildFile = async (app: AppContext): Promise<void> => {
   const { workshop } = app
   const text = await buildFileText(workshop.build.peek(), (key) => workshop.keeper.plan(key))
-  download(`${fileNameOf(nameOfBuild(app))}.build.json`, text, 'application/json')
+  download(`${fileNameOf(nameOfBuild(app))}-build.json`, text, 'application/json')
   app.announce('Build saved to a file.')
 }
 

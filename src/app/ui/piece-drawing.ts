@@ -16,7 +16,7 @@ export interface DrawnPiece {
   /** Holes and all: even-odd filled. */
   readonly panels: readonly { readonly panel: number; readonly rings: readonly (readonly Point2[])[] }[]
   readonly tabs: readonly (readonly Point2[])[]
-  /** As they print: on a mirrored sheet mountain and valley have changed places. */
+  /** Folds between panels, and roots of tabs. As they print: on a mirrored sheet mountain and valley have changed places. */
   readonly folds: readonly {
     readonly kind: 'mountain' | 'valley' | 'flat'
     readonly from: Point2
@@ -71,17 +71,23 @@ export const drawPiece = (plan: Plan, piece: PlanPiece): DrawnPiece => {
   const folded = new Set(piece.folds)
 
   const folds: DrawnPiece['folds'][number][] = []
+  const kindOf = (crease: PlanCrease): 'mountain' | 'valley' | 'flat' => {
+    if (Math.abs(crease.innerAngle - 180) < 1e-6) return 'flat'
+    return crease.innerAngle < 180 !== place.mirrored ? 'mountain' : 'valley'
+  }
+  const rootOf = new Map(piece.tabs.map(({ crease, outline }) => [crease, outline]))
   const seams: DrawnSeam[] = []
   for (const crease of plan.creases) {
     if (folded.has(crease.id)) {
       const edge = edgeOn(crease, crease.panels[0], find)
       if (!edge) continue
-      const isMountain = crease.innerAngle < 180 !== place.mirrored
-      const kind = Math.abs(crease.innerAngle - 180) < 1e-6 ? 'flat' : isMountain ? 'mountain' : 'valley'
-      folds.push({ kind, from: lay(edge[0]), to: lay(edge[1]) })
+      folds.push({ kind: kindOf(crease), from: lay(edge[0]), to: lay(edge[1]) })
       continue
     }
     if (crease.join !== 'seam') continue
+    // A tab is folded along its root.
+    const root = rootOf.get(crease.id)
+    if (root) folds.push({ kind: kindOf(crease), from: lay(root[0]!), to: lay(root[1]!) })
     for (const panel of crease.panels) {
       const edge = mine.has(panel) ? edgeOn(crease, panel, find) : null
       if (!edge) continue
