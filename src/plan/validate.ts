@@ -7,7 +7,14 @@ import * as sheets from './check-sheets'
 import * as skin from './check-skin'
 import { indexPlan, verdict } from './check-support'
 import * as tabs from './check-tabs'
+import { schemaFaults } from './conform'
+import { planSchema } from './schema'
 import type { Plan, PlanCheck } from './types'
+
+const keepsToSchema = (plan: unknown): PlanCheck => {
+  const faults = schemaFaults(planSchema, plan)
+  return verdict('keeps to the schema', faults, 'all fields there, none other')
+}
 
 /** Every id that the plan mentions must be there, and be there once: all other checks lean on that. */
 const idsLeadSomewhere = (plan: Plan): PlanCheck => {
@@ -61,14 +68,17 @@ const idsLeadSomewhere = (plan: Plan): PlanCheck => {
  * panel is laid flat once, pieces hold together and do not overlap, tabs keep the rules, seams are paired, sheets hold
  * everything, steps join, the docket's sums are right.
  *
- * @param plan as `planSchema` describes it (a plan of another shape may make this throw)
- * @returns one entry per promise, `ok` false with the first faults in `detail`; only the first entry if ids lead nowhere
+ * @param plan of any shape: what is no plan fails the first check
+ * @returns one entry per promise, `ok` false with the first faults in `detail`. Checks that lean on one that failed (the
+ *   schema, ids, panels and their flat copies) are left out.
  */
 export const validatePlan = (plan: Plan): PlanCheck[] => {
+  const schema = keepsToSchema(plan)
+  if (!schema.ok) return [schema]
   const ids = idsLeadSomewhere(plan)
-  if (!ids.ok) return [ids]
+  if (!ids.ok) return [schema, ids]
   const index = indexPlan(plan)
-  const first = [ids, skin.panelsAreTrue(index), nets.eachPanelOnce(index)]
+  const first = [schema, ids, skin.panelsAreTrue(index), nets.eachPanelOnce(index)]
   const copies = nets.piecesAreCopies(index)
   // What follows maps panels onto their flat copies, which must have the same points for that.
   if (!copies.ok || !first.every(({ ok }) => ok)) return [...first, copies]

@@ -20,6 +20,10 @@ const size = (plan: Plan): number => plan.model.heightMm
 type Break = readonly [check: string, how: string, (plan: Plan) => void]
 
 export const breaks: readonly Break[] = [
+  ['keeps to the schema', 'a coordinate is no number', (plan) => (plan.panels[0]!.rings[0]![0]![0] = Number.NaN)],
+  ['keeps to the schema', 'a part is missing', (plan) => delete (plan as Partial<Plan>).sheets],
+  ['keeps to the schema', 'there is a field too many', (plan) => Object.assign(plan.model, { colour: 'red' })],
+
   ['ids lead somewhere', 'a panel is lost', (plan) => plan.panels.pop()],
   ['ids lead somewhere', 'a crease is lost', (plan) => plan.creases.splice(largest(plan).folds[0]!, 1)],
   ['ids lead somewhere', 'two panels have one id', (plan) => (plan.panels[1]!.id = plan.panels[0]!.id)],
@@ -41,7 +45,6 @@ export const breaks: readonly Break[] = [
     },
   ],
   ['panels are flat and true', 'an area is wrong', (plan) => (plan.panels[0]!.areaMm2 *= 1.001)],
-  ['panels are flat and true', 'a coordinate is no number', (plan) => (plan.panels[0]!.rings[0]![0]![0] = Number.NaN)],
 
   [
     'each panel once',

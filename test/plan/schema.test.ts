@@ -1,20 +1,20 @@
 import { describe, expect, test } from 'vitest'
+import { schemaFaults } from '../../src/plan/conform'
 import { planSchema } from '../../src/plan/schema'
 import type { Plan } from '../../src/plan/types'
 import { cubePlan } from './by-hand'
-import { faultsOf } from './conform'
 
 /** A plan, and one place of it changed beyond what the type allows. */
 const broken = (damage: (plan: Plan) => unknown): string[] => {
   const plan = cubePlan()
   damage(plan)
-  return faultsOf(planSchema, plan)
+  return schemaFaults(planSchema, plan)
 }
 const loose = (value: object): Record<string, unknown> => value as Record<string, unknown>
 
 describe('schema of the plan file', () => {
   test('a plan made by hand conforms', () => {
-    expect(faultsOf(planSchema, cubePlan())).toEqual([])
+    expect(schemaFaults(planSchema, cubePlan())).toEqual([])
   })
 
   const damages: [how: string, (plan: Plan) => unknown, fault: RegExp][] = [
@@ -49,6 +49,6 @@ describe('schema of the plan file', () => {
   })
 
   test('a keyword that the reader does not know is an error, not passed over', () => {
-    expect(() => faultsOf({ ...planSchema, ...{ allOf: [] } }, cubePlan())).toThrow(/allOf/)
+    expect(() => schemaFaults({ ...planSchema, ...{ allOf: [] } }, cubePlan())).toThrow(/allOf/)
   })
 })

@@ -1,4 +1,5 @@
 import { describe, expect, test } from 'vitest'
+import type { Plan } from '../../src/plan/types'
 import { validatePlan } from '../../src/plan/validate'
 import { breaks, failing } from './broken'
 import { cubePlan } from './by-hand'
@@ -12,6 +13,10 @@ describe('validatePlan on a plan made by hand', () => {
     const plan = cubePlan()
     damage(plan)
     expect(failing(validatePlan(plan))).toContain(check)
+  })
+
+  test.each([null, 'plan', 5, [], {}])('%j is no plan, which is said and not thrown', (value) => {
+    expect(failing(validatePlan(value as unknown as Plan))).toEqual(['keeps to the schema'])
   })
 
   test('every check has been seen to fail', () => {

@@ -1,5 +1,6 @@
 /** A strict reader of the part of JSON Schema (draft 2020-12) that `planSchema` uses; an unknown keyword is an error. */
-import type { Schema } from '../../src/plan/schema'
+import { BrokenPromise } from '../errors'
+import type { Schema } from './schema'
 
 const known = new Set<string>([
   ...['$schema', '$ref', '$defs', 'title', 'description', 'type', 'const', 'enum', 'pattern', 'minLength', 'minimum'],
@@ -13,14 +14,15 @@ const isType = (value: unknown, type: string): boolean =>
   type === 'integer' ? Number.isInteger(value) : typeOf(value) === type && (type !== 'number' || Number.isFinite(value))
 
 /** One line per fault, with its place; empty if `value` conforms. */
-export const faultsOf = (root: Schema, value: unknown): string[] => {
+export const schemaFaults = (root: Schema, value: unknown): string[] => {
   const faults: string[] = []
   const visit = (schema: Schema, here: unknown, place: string): void => {
-    for (const keyword of Object.keys(schema)) if (!known.has(keyword)) throw new Error(`unknown keyword ${keyword}`)
+    for (const keyword of Object.keys(schema))
+      if (!known.has(keyword)) throw new BrokenPromise('Unknown keyword in a schema.', { keyword })
     const say = (what: string): number => faults.push(`${place}: ${what}`)
     if (schema.$ref) {
       const target = root.$defs?.[schema.$ref.replace('#/$defs/', '')]
-      if (!target) throw new Error(`${schema.$ref} leads nowhere`)
+      if (!target) throw new BrokenPromise('A reference in a schema leads nowhere.', { ref: schema.$ref })
       visit(target, here, place)
     }
     if (schema.const !== undefined && here !== schema.const) say(`is not ${schema.const}`)
