@@ -160,8 +160,8 @@ const centreOf = (skin: Skin, piece: Piece): Point => {
 }
 
 /**
- * Last comes a piece with much area for little rim, seams of obtuse inner angle where fingers reach, and long edges;
- * common practice, no source. It must not be what holds the rest together.
+ * Last comes a large plain lid: much area for little outline, few panels, few and long edges, seams of obtuse inner angle
+ * where fingers reach; common practice, no source. It must not be what holds the rest together.
  */
 const closingPiece = (
   skin: Skin,
@@ -172,16 +172,19 @@ const closingPiece = (
   if (part.length < 3) return -1
   const scored = part.map((i) => {
     let rim = 0
+    let outline = 0
     let bend = 0
     for (const s of seamsOf[i]!) {
+      outline += s.a === s.b ? 2 * s.length : s.length
       if (s.a === s.b) continue
-      const { innerAngle, length } = skin.creases[s.crease]!
-      rim += length
-      bend += length * Math.abs(180 - innerAngle)
+      rim += s.length
+      bend += s.length * Math.abs(180 - skin.creases[s.crease]!.innerAngle)
     }
-    const area = pieces[i]!.panels.reduce((sum, p) => sum + skin.panels[p.panel]!.area, 0)
-    const edges = seamsOf[i]!.length
-    return { i, score: rim > 0 ? (area / (rim * rim)) * (1 - bend / rim / 360) * Math.sqrt(area) * (1 + 1 / edges) : 0 }
+    const { panels } = pieces[i]!
+    const area = panels.reduce((sum, p) => sum + skin.panels[p.panel]!.area, 0)
+    const round = area / (outline * outline)
+    const open = rim > 0 ? 1 - bend / rim / 360 : 0
+    return { i, score: round * open * Math.sqrt(area / panels.length) * (1 + 1 / seamsOf[i]!.length) }
   })
   scored.sort((a, b) => (Math.abs(a.score - b.score) > 1e-9 ? b.score - a.score : a.i - b.i))
   const whole = connectedParts(seamsOf).length

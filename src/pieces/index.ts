@@ -19,8 +19,8 @@ export interface CutOptions {
   readonly perKind?: boolean
   /** Kept free for tabs on every side of the rectangle while nets are sought; default 3. */
   readonly tabRoomMm?: number
-  /** Rounds of search; the default grows with the number of panels. 0: plain greedy merging. */
-  readonly rounds?: number
+  /** How long to search, see `SearchOptions.effort`; the default grows with the number of panels. 0: greedy merging. */
+  readonly effort?: number
   readonly seed?: number
 }
 
@@ -37,8 +37,8 @@ export interface Cut {
 export const cutIntoPieces = (skin: Skin, options: CutOptions, progress: Progress = noProgress): Cut => {
   const { edgeMm, fit, perKind = false, tabRoomMm = 3, seed = 1 } = options
   const graph = panelGraph(skin, edgeMm)
-  const rounds = options.rounds ?? usualRounds(graph.flat.length)
-  const folds = searchFolds(graph, { fit: fitWithoutTabs(fit, tabRoomMm), perKind, rounds, seed }, progress)
+  const effort = options.effort ?? usualEffort(graph.flat.length)
+  const folds = searchFolds(graph, { fit: fitWithoutTabs(fit, tabRoomMm), perKind, effort, seed }, progress)
   return { pieces: layOutPieces(graph, folds, fit), folds }
 }
 
@@ -47,8 +47,8 @@ const fitWithoutTabs = ({ widthMm, heightMm }: FitRectangle, room: number): FitR
   heightMm: heightMm - 2 * room,
 })
 
-/** Enough for most of what there is to gain; about a second below 500 panels, some ten for the largest skins. */
-const usualRounds = (panels: number): number => 100 + 4 * panels
+/** Enough for most of what there is to gain; a second or two below 500 panels, some ten for the largest skins. */
+const usualEffort = (panels: number): number => Math.min(10 * panels, 1000 + 4 * panels)
 
 /** The pieces of a set of folds, whoever chose it; by smallest panel id. Congruent pieces get the same coordinates. */
 export const piecesOf = (skin: Skin, edgeMm: number, folds: readonly number[], fit: FitRectangle): Piece[] =>

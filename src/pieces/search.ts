@@ -17,8 +17,11 @@ export interface SearchOptions {
   readonly fit: FitRectangle
   /** Only creases between panels of one face kind may fold. */
   readonly perKind: boolean
-  /** Rounds of local search after the greedy start; 0 leaves plain greedy merging. */
-  readonly rounds: number
+  /**
+   * How long to search after the greedy start, in thousands of panels laid beside others (about 1 ms each); 0 leaves
+   * plain greedy merging.
+   */
+  readonly effort: number
   readonly seed: number
 }
 
@@ -80,7 +83,7 @@ const foldWeight = 0.05
 
 /** @returns crease ids that fold, ascending */
 export const searchFolds = (graph: PanelGraph, options: SearchOptions, progress: Progress): number[] => {
-  const { fit, perKind, rounds, seed } = options
+  const { fit, perKind, effort, seed } = options
   const allowed = graph.links.filter((l) => !perKind || graph.kinds[l.sides[0].panel] === graph.kinds[l.sides[1].panel])
   const singles = graph.flat.map((_, i) => singlePatch(graph, i, fit))
   const nets = new Nets(singles)
@@ -90,6 +93,7 @@ export const searchFolds = (graph: PanelGraph, options: SearchOptions, progress:
       const a = nets.of[link.sides[0].panel]!
       const b = nets.of[link.sides[1].panel]!
       if (a === b) return
+      laid += 10 + Math.min(a.panels.length, b.panels.length) + Math.max(a.panels.length, b.panels.length) / 8
       const joined = joinPatches(graph, a, b, link, fit)
       if (!joined) return
       joining(a, b, joined)
@@ -97,6 +101,7 @@ export const searchFolds = (graph: PanelGraph, options: SearchOptions, progress:
     })
   }
   let done = 0
+  let laid = 0
   merge(
     [...allowed].sort((a, b) => foldWish(b) - foldWish(a) || a.id - b.id),
     () => {},
@@ -115,8 +120,10 @@ export const searchFolds = (graph: PanelGraph, options: SearchOptions, progress:
   let cost = costOf(nets.list, full, wishes)
   let best = [...nets.list]
   let bestCost = cost
-  for (let round = 0; round < rounds && best.length > floor; round++) {
-    done = round / rounds
+  const limit = 1000 * effort
+  laid = 0
+  while (laid < limit && best.length > floor) {
+    done = laid / limit
     const heat = startHeat * (1 - done) ** 2
     const undo = chooseGroup(nets, graph, random)
     const fresh = new Set(takeApart(undo, graph, singles, random))

@@ -19,8 +19,8 @@ import {
 
 const a4 = { widthMm: 190, heightMm: 277 }
 
-const whole = (skin: Skin, edgeMm: number, fit = a4, rounds = 150) => {
-  const cut = cutIntoPieces(skin, { edgeMm, fit, rounds })
+const whole = (skin: Skin, edgeMm: number, fit = a4, effort = 150) => {
+  const cut = cutIntoPieces(skin, { edgeMm, fit, effort })
   const { pieces, steps } = renumber(cut.pieces, gluingOrder(skin, cut.pieces))
   const { tabs, buttSeams } = assignTabs(skin, pieces, { fit })
   const checks = validatePieces({ skin, edgeMm, pieces, tabs, buttSeams: buttSeams.map((b) => b.crease), fit })
@@ -93,16 +93,16 @@ describe('cutIntoPieces', () => {
 
   it('gives the same bytes for the same request, and other nets for another seed', () => {
     const cut = (seed: number) =>
-      JSON.stringify(cutIntoPieces(smallStellated(), { edgeMm: 60, fit: a4, rounds: 60, seed }))
+      JSON.stringify(cutIntoPieces(smallStellated(), { edgeMm: 60, fit: a4, effort: 60, seed }))
     expect(cut(1)).toBe(cut(1))
     expect(cut(2)).not.toBe(cut(1))
   })
 
   it('is never worse than plain greedy merging, and gets the pieces again from the folds alone', () => {
     const skin = smallStellated()
-    const count = (rounds: number) => cutIntoPieces(skin, { edgeMm: 60, fit: a4, rounds }).pieces.length
+    const count = (effort: number) => cutIntoPieces(skin, { edgeMm: 60, fit: a4, effort }).pieces.length
     expect(count(200)).toBeLessThan(count(0))
-    const cut = cutIntoPieces(skin, { edgeMm: 60, fit: a4, rounds: 50 })
+    const cut = cutIntoPieces(skin, { edgeMm: 60, fit: a4, effort: 50 })
     expect(piecesOf(skin, 60, cut.folds, a4)).toEqual(cut.pieces)
   })
 
@@ -117,7 +117,7 @@ describe('cutIntoPieces', () => {
 
   it('reports progress that never goes back, and stops when told', () => {
     const seen: number[] = []
-    cutIntoPieces(pitted(), { edgeMm: 60, fit: a4, rounds: 50 }, (_, fraction) => seen.push(fraction))
+    cutIntoPieces(pitted(), { edgeMm: 60, fit: a4, effort: 50 }, (_, fraction) => seen.push(fraction))
     expect(seen.length).toBeGreaterThan(20)
     expect([...seen].sort((a, b) => a - b)).toEqual(seen)
     const stop = () =>

@@ -7,7 +7,7 @@ export const a4 = { widthMm: 190, heightMm: 277 }
 
 export const planOf = (skin: Skin, edgeMm: number, options: Partial<CutOptions> = {}): PiecesPlan => {
   const fit = options.fit ?? a4
-  const cut = cutIntoPieces(skin, { edgeMm, fit, rounds: 100, ...options })
+  const cut = cutIntoPieces(skin, { edgeMm, fit, effort: 100, ...options })
   const { pieces } = renumber(cut.pieces, gluingOrder(skin, cut.pieces))
   const { tabs, buttSeams } = assignTabs(skin, pieces, { fit })
   return { skin, edgeMm, pieces, tabs, buttSeams: buttSeams.map((b) => b.crease), fit }

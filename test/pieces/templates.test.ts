@@ -124,7 +124,7 @@ describe('templates', () => {
   })
 
   it('names templates in the pieces of a whole cut as well', () => {
-    const { pieces } = cutIntoPieces(smallStellated(), { edgeMm: 40, fit: { widthMm: 80, heightMm: 90 }, rounds: 0 })
+    const { pieces } = cutIntoPieces(smallStellated(), { edgeMm: 40, fit: { widthMm: 80, heightMm: 90 }, effort: 0 })
     expect(new Set(pieces.map((p) => p.template)).size).toBeLessThan(pieces.length)
   })
 })
