@@ -1,6 +1,7 @@
 /** Reads the command line. What is wrong with it becomes an `InputError` of one line that says what would be right. */
 import { parseArgs } from 'node:util'
 import { InputError } from '../errors'
+import { greatestHeightMm, leastHeightMm, usualChoices } from '../plan/choices'
 import type { FillRule } from '../solids/types'
 
 export type Command =
@@ -19,9 +20,6 @@ export type Command =
       readonly out: string
     }
 
-/** Smallest and largest model in mm. */
-export const heightRange = [10, 2000] as const
-
 export const usage = `Use:
   npm run --silent batch -- list [--json]
       the solids and their facts
@@ -29,7 +27,7 @@ export const usage = `Use:
       what can be touched from outside: panels, area, volume, bodies (unit edge)
   npm run --silent batch -- plan ID --height MM --out DIR [--paper a4|letter] [--fill nonzero|evenodd]
                             [--hand left|right] [--side outside|inside] [--colours one|kind]
-      writes plan.json and sheets.pdf into DIR; MM is the diameter of the sphere through the vertices, 10 to 2000
+      writes plan.json and sheets.pdf into DIR; MM is the diameter of the sphere through the vertices, ${leastHeightMm} to ${greatestHeightMm}
 
 Without --json a table for reading. Exit code 0: done; 2: the command line cannot be followed; 1: anything else.`
 
@@ -93,9 +91,9 @@ const read = (name: Name, args: string[]): { given: Given; ids: string[] } => {
   }
 }
 
-const choose = <T extends string>(given: Given, option: string, values: readonly [T, ...T[]]): T => {
+const choose = <T extends string>(given: Given, option: string, values: readonly T[], usual: T): T => {
   const told = given[option]
-  if (told === undefined) return values[0]
+  if (told === undefined) return usual
   const found = values.find((v) => v === told)
   if (found === undefined)
     throw new InputError(`--${option} is ${values.join(' or ')}, not ${String(told)}.`, `--${option}`)
@@ -105,13 +103,13 @@ const choose = <T extends string>(given: Given, option: string, values: readonly
 const fills = ['nonzero', 'evenodd'] as const
 
 const readHeight = (told: string | boolean | undefined): number => {
-  const [least, most] = heightRange
-  const right = `say a number of millimetres from ${least} to ${most}, for example --height 250`
+  const right = `say a number of millimetres from ${leastHeightMm} to ${greatestHeightMm}, for example --height 250`
   if (typeof told !== 'string') throw new InputError(`The height is missing; ${right}.`, '--height')
   // Number() would also take '', ' 1 ', '0x10' and 'Infinity'.
   const height = /^[+-]?(\d+\.?\d*|\.\d+)$/.test(told) ? Number(told) : Number.NaN
   if (Number.isNaN(height)) throw new InputError(`The height ${told} is not a number; ${right}.`, '--height')
-  if (height < least || height > most) throw new InputError(`The height ${told} is out of range; ${right}.`, '--height')
+  if (height < leastHeightMm || height > greatestHeightMm)
+    throw new InputError(`The height ${told} is out of range; ${right}.`, '--height')
   return height
 }
 
@@ -141,7 +139,7 @@ export const readCommand = (args: readonly string[]): Command => {
     case 'skin': {
       if (given.all && ids[0] !== undefined) throw new InputError(`Say either ${ids[0]} or --all, not both.`, '--all')
       const id = given.all ? 'all' : oneId(name, ids, ' or skin --all')
-      return { name, id, fill: choose(given, 'fill', fills), json }
+      return { name, id, fill: choose(given, 'fill', fills, usualChoices.fill), json }
     }
     case 'plan': {
       const id = oneId(name, ids, ' --height 250 --out DIR')
@@ -153,11 +151,11 @@ export const readCommand = (args: readonly string[]): Command => {
         name,
         id,
         heightMm,
-        paper: choose(given, 'paper', ['a4', 'letter']),
-        fill: choose(given, 'fill', fills),
-        hand: choose(given, 'hand', ['left', 'right']),
-        side: choose(given, 'side', ['outside', 'inside']),
-        colours: choose(given, 'colours', ['one', 'kind']),
+        paper: choose(given, 'paper', ['a4', 'letter'], usualChoices.paper),
+        fill: choose(given, 'fill', fills, usualChoices.fill),
+        hand: choose(given, 'hand', ['left', 'right'], usualChoices.hand),
+        side: choose(given, 'side', ['outside', 'inside'], usualChoices.side),
+        colours: choose(given, 'colours', ['one', 'kind'], usualChoices.colours),
         out,
       }
     }

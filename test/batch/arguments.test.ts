@@ -23,7 +23,7 @@ describe('the command line', () => {
       heightMm: 250,
       paper: 'a4',
       fill: 'nonzero',
-      hand: 'left',
+      hand: 'right',
       side: 'outside',
       colours: 'one',
       out: 'x',
@@ -32,12 +32,12 @@ describe('the command line', () => {
 
   test('plan with all options, in any order and with equals signs', () => {
     const line =
-      'plan --out=a --side inside cube --hand right --height=99.5 --paper letter --fill evenodd --colours kind'
+      'plan --out=a --side inside cube --hand left --height=99.5 --paper letter --fill evenodd --colours kind'
     expect(readCommand(words(line))).toMatchObject({
       heightMm: 99.5,
       paper: 'letter',
       fill: 'evenodd',
-      hand: 'right',
+      hand: 'left',
       side: 'inside',
       colours: 'kind',
       out: 'a',

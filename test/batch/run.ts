@@ -24,7 +24,7 @@ const outcome = (command: string, args: readonly string[], cwd: string): Promise
 
 /** As the README says, through npm; `cwd` is where it is called. */
 export const npmBatch = (args: readonly string[], cwd: string = projectFolder): Promise<Outcome> =>
-  outcome('npm', ['run', '--silent', 'batch', '--', ...args], cwd)
+  outcome('npm', ['--prefix', projectFolder, 'run', '--silent', 'batch', '--', ...args], cwd)
 
 /** The same program without npm, which saves its start. */
 export const batch = (args: readonly string[]): Promise<Outcome> =>
