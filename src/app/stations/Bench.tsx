@@ -10,8 +10,9 @@ import { lightPiece } from '../ui/lit-page'
 import { ModelView } from '../ui/ModelView'
 import { PieceFigure } from '../ui/PieceFigure'
 import { type Pages, usePageInto, usePages } from '../ui/pages'
-import { facing, pieceByPanel, planItems } from '../ui/scene'
+import { pieceByPanel, planItems } from '../ui/scene'
 import { travel } from '../ui/travel'
+import { vantage } from '../ui/vantage'
 import { sayAcross, sayStep } from '../words/bench'
 import { agoText, counted, hoursText } from '../words/figures'
 import { capital } from '../words/solid'
@@ -129,10 +130,10 @@ const AtWork = ({ planned }: { planned: Planned }) => {
       }),
     [seams, strong.value, piece.id],
   )
-  const look = useMemo(() => {
-    const direction = facing(plan, piece.id) ?? plan.panels.find(({ id }) => id === piece.panels[0]!.panel)!.normal
-    return { direction, key: String(piece.id) }
-  }, [plan, piece.id])
+  const look = useMemo(
+    () => ({ direction: vantage(plan, piece.id, shown.visible), key: String(piece.id) }),
+    [plan, piece.id],
+  )
 
   const sentence = sayStep(plan, piece, seams, sheetOf(plan, piece.id))
   const note = plan.steps.find((entry) => entry.piece === piece.id)?.note ?? ''

@@ -13,7 +13,8 @@ import { Legend } from '../ui/Legend'
 import { lightPiece, pieceAt } from '../ui/lit-page'
 import { ModelView } from '../ui/ModelView'
 import { type Pages, usePageInto, usePages } from '../ui/pages'
-import { facing, pieceByPanel, planItems } from '../ui/scene'
+import { pieceByPanel, planItems } from '../ui/scene'
+import { vantage } from '../ui/vantage'
 import { counted } from '../words/figures'
 
 /** Steps of the page's zoom; 1 shows the whole page. */
@@ -94,7 +95,7 @@ const Page = ({
   onTurn: (by: number) => void
 }) => {
   const { pointed, announce } = useApp()
-  const frame = useRef<HTMLDivElement>(null)
+  const frame = useRef<HTMLElement>(null)
   const host = useRef<HTMLDivElement>(null)
   const zoom = useSignal(1)
   const page = pages.list.value[index]
@@ -170,12 +171,11 @@ const Page = ({
           </button>
         </span>
       </div>
-      {/* biome-ignore lint/a11y/noNoninteractiveTabindex: it scrolls, and takes the keys for paging and zoom */}
-      <div
+      <section
         class="page-frame"
         ref={frame}
+        // biome-ignore lint/a11y/noNoninteractiveTabindex: it scrolls, and takes the keys for paging and zoom
         tabIndex={0}
-        role="group"
         aria-label={`Page ${index + 1}: arrows turn pages, plus and minus zoom`}
         onKeyDown={(event) => {
           if (event.ctrlKey || event.metaKey || event.altKey) return
@@ -199,7 +199,7 @@ const Page = ({
           onPointerDown={holdPiece}
           onPointerLeave={(event) => event.pointerType !== 'touch' && point(null)}
         />
-      </div>
+      </section>
     </section>
   )
 }
@@ -264,8 +264,8 @@ const Corner = ({
   }, [piece, panel, label])
   // Turns only for what was pointed at elsewhere: under the pointer the model stands still.
   const look = useMemo(() => {
-    const direction = piece !== null && panel === null ? facing(plan, piece) : null
-    return direction ? { direction, key: `${piece}` } : null
+    if (piece === null || panel !== null) return null
+    return { direction: vantage(plan, piece, new Set(pieceOf.keys())), key: `${piece}` }
   }, [piece, panel, plan])
   const timer = useRef<ReturnType<typeof setTimeout>>(undefined)
   useEffect(() => () => clearTimeout(timer.current), [])

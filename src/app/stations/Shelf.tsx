@@ -41,10 +41,8 @@ const useFound = () => {
 const Filters = () => (
   <div class="filters">
     {filterGroups.map(({ name, filters }) => (
-      <div key={name} class="row tight" role="group" aria-label={name}>
-        <span class="filter-name" aria-hidden="true">
-          {name}
-        </span>
+      <fieldset key={name} class="row tight">
+        <legend class="filter-name">{name}</legend>
         {filters.map(({ id, word }) => (
           <button
             key={id}
@@ -60,7 +58,7 @@ const Filters = () => (
             {word}
           </button>
         ))}
-      </div>
+      </fieldset>
     ))}
   </div>
 )

@@ -21,6 +21,7 @@ export const Dialog = ({
     }
   }, [])
   return (
+    // biome-ignore lint/a11y/useKeyWithClickEvents: Escape closes a dialog by itself
     <dialog
       ref={ref}
       aria-labelledby={id}

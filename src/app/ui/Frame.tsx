@@ -108,16 +108,9 @@ export const Frame = () => {
   const whose = onBench && workshop.job.value ? 'of the model on the Bench' : (solid.value?.name ?? '')
   return (
     <div class="frame">
-      <a
-        class="skip"
-        href="#main"
-        onClick={(event) => {
-          event.preventDefault()
-          main.current?.focus()
-        }}
-      >
+      <button type="button" class="skip" onClick={() => main.current?.focus()}>
         To the station
-      </a>
+      </button>
       <header class="top">
         <button
           type="button"

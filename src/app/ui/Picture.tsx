@@ -42,5 +42,9 @@ export const Picture = ({ solid, size }: { solid: string; size: number }) => {
       watch.disconnect()
     }
   }, [solid, size])
-  return <canvas ref={ref} class="picture" style={{ width: `${size}px`, height: `${size}px` }} aria-hidden="true" />
+  return (
+    <span class="picture" aria-hidden="true">
+      <canvas ref={ref} style={{ width: `${size}px`, height: `${size}px` }} />
+    </span>
+  )
 }

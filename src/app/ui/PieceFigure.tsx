@@ -7,6 +7,10 @@ import { drawPiece } from './piece-drawing'
 const path = (rings: readonly (readonly Point2[])[]): string =>
   rings.map((ring) => `M${ring.map(([x, y]) => `${x.toFixed(3)} ${y.toFixed(3)}`).join('L')}Z`).join('')
 
+/** A label no longer than its edge, but never too small to be read. */
+const fitted = (from: Point2, to: Point2, size: number): number =>
+  Math.max(0.6 * size, Math.min(size, 0.6 * Math.hypot(to[0] - from[0], to[1] - from[1])))
+
 interface Props {
   readonly plan: Plan
   readonly piece: PlanPiece
@@ -41,10 +45,9 @@ export const PieceFigure = ({ plan, piece, tints, now, strong }: Props) => {
       ))}
       <path d={path([drawn.outline])} class="cut" stroke-width={1.4 * unit} />
       {drawn.panels.flatMap(({ panel, rings }) =>
-        rings.slice(1).map((ring, i) => (
-          // biome-ignore lint/suspicious/noArrayIndexKey: holes have no other name
-          <path key={`${panel} ${i}`} d={path([ring])} class="cut" stroke-width={1.4 * unit} />
-        )),
+        rings
+          .slice(1)
+          .map((ring, i) => <path key={`${panel} ${i}`} d={path([ring])} class="cut" stroke-width={1.4 * unit} />),
       )}
       {drawn.folds.map(({ kind, from, to }) => (
         <line
@@ -71,7 +74,7 @@ export const PieceFigure = ({ plan, piece, tints, now, strong }: Props) => {
               <text
                 x={at[0]}
                 y={at[1]}
-                font-size={isNow ? 1.3 * text : text}
+                font-size={fitted(from, to, isNow ? 1.3 * text : text)}
                 text-anchor="middle"
                 dominant-baseline="central"
               >

@@ -104,8 +104,8 @@ export const usePageInto = (
       .then((text) => {
         const box = host.current
         if (stale || !box) return
-        // Text of our own writer, without scripts.
-        box.innerHTML = text.slice(text.indexOf('<svg'))
+        // Text of our own writer, without scripts. Its title would follow the pointer as a hint.
+        box.innerHTML = text.slice(text.indexOf('<svg')).replace(/<title>[^<]*<\/title>/, '')
         box.dataset.page = String(index + 1)
         onDrawn()
       })

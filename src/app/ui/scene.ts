@@ -20,20 +20,6 @@ export const planItems = (plan: Plan, tints: Readonly<Record<string, string>>): 
   }))
 }
 
-/** Outward direction from which a piece is seen best: its panels' normals by area. Null when they cancel out. */
-export const facing = (plan: Plan, piece: number): [number, number, number] | null => {
-  const mine = new Set(plan.pieces.find(({ id }) => id === piece)?.panels.map(({ panel }) => panel))
-  const sum: [number, number, number] = [0, 0, 0]
-  let area = 0
-  for (const { id, normal, areaMm2 } of plan.panels) {
-    if (!mine.has(id)) continue
-    area += areaMm2
-    for (let k = 0; k < 3; k++) sum[k]! += normal[k]! * areaMm2
-  }
-  const length = Math.hypot(...sum)
-  return length > 1e-6 * area ? [sum[0] / length, sum[1] / length, sum[2] / length] : null
-}
-
 export interface KindShown {
   readonly kind: string
   readonly panels: number
