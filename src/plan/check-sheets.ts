@@ -123,6 +123,11 @@ export const docketAgrees = ({ plan, creases, panels }: PlanIndex): PlanCheck =>
   const seams = plan.creases.filter(({ join }) => join === 'seam')
   say('seams', docket.seams, seams.length)
   say('sheets', docket.sheets, plan.sheets.length)
+  // Several creases lie along one line contact; their ends are the same points to the last digit.
+  const lines = plan.creases
+    .filter(({ contact }) => contact === 'line')
+    .map(({ ends }) => ends.map(String).sort().join(' '))
+  say('line contacts', docket.lineContacts, new Set(lines).size)
   const card = plan.sheets.reduce((sum, { widthMm, heightMm }) => sum + widthMm * heightMm, 0)
   say('card area', docket.cardAreaMm2, card, 1e-6 * card)
   const net =

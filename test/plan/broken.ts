@@ -117,7 +117,7 @@ export const breaks: readonly Break[] = [
       for (const point of largest(plan).panels[0]!.rings[0]!) for (const i of [0, 1] as const) point[i] *= 1.001
     },
   ],
-  ['pieces are flat copies', 'a point is missing', (plan) => largest(plan).panels[0]!.rings[0]!.pop()],
+  ['pieces are flat copies', 'there is a point too many', (plan) => largest(plan).panels[0]!.rings[0]!.push([0, 0])],
 
   [
     'folds hold each piece together',
@@ -257,7 +257,14 @@ export const breaks: readonly Break[] = [
 
   ['everything is on a sheet', 'a piece lies off the sheet', (plan) => (plan.sheets[0]!.placed[0]!.x += 400)],
   ['everything is on a sheet', 'a piece reaches into the margin', (plan) => (plan.sheets[0]!.marginMm += 1000)],
-  ['everything is on a sheet', 'a piece is forgotten', (plan) => plan.sheets[0]!.placed.pop()],
+  [
+    'everything is on a sheet',
+    'a piece is forgotten',
+    (plan) => {
+      const placed = plan.sheets.flatMap((sheet) => sheet.placed)
+      placed[0]!.piece = placed[1]!.piece
+    },
+  ],
   [
     'everything is on a sheet',
     'a piece is placed twice',
@@ -280,8 +287,9 @@ export const breaks: readonly Break[] = [
     'nothing overlaps on a sheet',
     'one piece lies on another',
     (plan) => {
-      const sheet = plan.sheets.find(({ placed }) => placed.length > 1)!
-      const [a, b] = sheet.placed
+      const [a, other] = plan.sheets.flatMap((sheet) => sheet.placed)
+      const b = structuredClone(other)
+      plan.sheets[0]!.placed.push(b!)
       const outline = (id: number): Point2 => plan.pieces.find((piece) => piece.id === id)!.outline[0]!
       // Their first corners come together, turned the same way.
       b!.rotation = a!.rotation
@@ -312,6 +320,7 @@ export const breaks: readonly Break[] = [
       'pieces',
       'templates',
       'seams',
+      'lineContacts',
       'sheets',
       'cardAreaMm2',
       'netAreaMm2',
