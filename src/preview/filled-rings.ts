@@ -10,8 +10,10 @@ type FillRule = 'nonzero' | 'evenodd'
 /** One connected part: its outer ring counter-clockwise seen from the tip of the normal, then its holes clockwise. */
 export type Polygon3 = Vec3[][]
 
-/** Relative to the polygon's size; crossings nearer than this are one point. */
+/** Relative to the polygon's size; crossings nearer than ten times this are one point. */
 const tolerance = 1e-9
+/** How far beside the middle of an edge its two sides are tried, relative to its length. */
+const probeStep = 1e-6
 
 /** Parameter of the point on a→b where the line c→d crosses it within c…d, or NaN. */
 const crossing = (a: Vec2, b: Vec2, c: Vec2, d: Vec2): number => {
@@ -75,9 +77,8 @@ export const filledRings = (cycle: readonly Vec3[], normal: Vec3, rule: FillRule
       if (from === to) continue
       const p = points[from]!
       const q = points[to]!
-      // A short step off the middle: far inside the tolerance gap, far outside rounding.
       const m: Vec2 = [(p[0] + q[0]) / 2, (p[1] + q[1]) / 2]
-      const n: Vec2 = [-(q[1] - p[1]) * 1e-4, (q[0] - p[0]) * 1e-4]
+      const n: Vec2 = [-(q[1] - p[1]) * probeStep, (q[0] - p[0]) * probeStep]
       const left = isFilled([m[0] + n[0], m[1] + n[1]])
       const right = isFilled([m[0] - n[0], m[1] - n[1]])
       if (left && !right) steps.set(`${from}>${to}`, { from, to, used: false })
@@ -111,7 +112,8 @@ export const filledRings = (cycle: readonly Vec3[], normal: Vec3, rule: FillRule
       step.used = true
       path.push(points[step.from]!)
     }
-    ;(signedArea(path) > 0 ? outers : holes).push(path)
+    // Edges that all but coincide may leave a walk without ground.
+    if (path.length >= 3) (signedArea(path) > 0 ? outers : holes).push(path)
   }
 
   const toSpace = (path: readonly Vec2[]): Vec3[] =>
@@ -120,7 +122,7 @@ export const filledRings = (cycle: readonly Vec3[], normal: Vec3, rule: FillRule
   for (const hole of holes) {
     // The smallest outer ring around a point just inside the filled side of the hole's first edge.
     const [p, q] = [hole[0]!, hole[1]!]
-    const probe: Vec2 = [(p[0] + q[0]) / 2 - (q[1] - p[1]) * 1e-4, (p[1] + q[1]) / 2 + (q[0] - p[0]) * 1e-4]
+    const probe: Vec2 = [(p[0] + q[0]) / 2 - (q[1] - p[1]) * probeStep, (p[1] + q[1]) / 2 + (q[0] - p[0]) * probeStep]
     const around = polygons.filter((g) => windingNumber(g.outer, probe) !== 0)
     around.sort((a, b) => signedArea(a.outer) - signedArea(b.outer))
     around[0]?.holes.push(hole)

@@ -75,6 +75,13 @@ describe('camera', () => {
     expect(determinant(camera.rotation)).toBeCloseTo(1, 12)
   })
 
+  test('a matrix that is no longer quite a rotation is made one', () => {
+    const { camera, random } = randomCamera(13)
+    camera.setRotation(camera.rotation.map((row) => row.map((v) => 1.01 * v + 0.01 * random())) as never)
+    for (const [i, row] of camera.rotation.entries())
+      for (const [j, other] of camera.rotation.entries()) expect(dot(row, other)).toBeCloseTo(i === j ? 1 : 0, 12)
+  })
+
   test('a drag to the right moves the near side to the right, a drag downwards moves it down', () => {
     const camera = new Camera([0, 0, 1])
     camera.resize(400, 400)

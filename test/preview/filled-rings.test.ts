@@ -114,3 +114,18 @@ describe('the filled region of any plane polygon', () => {
     expect(filled).toBeGreaterThan(50)
   })
 })
+
+test('a hole goes to the part around it, not to the first, seeds 46 and 157', () => {
+  for (const [length, seed] of [
+    [9, 46],
+    [13, 157],
+  ] as const) {
+    const random = seeded(seed)
+    const cycle = Array.from({ length }, (): Vec3 => [random(), random(), 0])
+    const parts = filledRings(cycle, [0, 0, 1], 'nonzero')
+    const holed = parts.findIndex((part) => part.length === 2)
+    expect(holed).toBeGreaterThan(0)
+    const [outer, hole] = parts[holed]!.map((ring) => ring.map(([x, y]): Vec2 => [x, y]))
+    for (const p of hole!) expect(windingNumber(outer!, p)).toBe(1)
+  }
+})

@@ -108,6 +108,56 @@ describe('a pick is what an independent ray caster meets', () => {
       expect(met).toBeGreaterThan(300)
     })
 
+  test('is what the z-buffer shows, also where two sides lie back to back, seed 6', () => {
+    const random = seeded(6)
+    const items = randomItems(20, random).flatMap((item): SceneItem[] => [
+      { ...item, id: 2 * item.id, kind: 'all' },
+      {
+        ...item,
+        id: 2 * item.id + 1,
+        kind: 'all',
+        normal: [-item.normal[0], -item.normal[1], -item.normal[2]],
+        rings: [[...item.rings[0]!].reverse()],
+      },
+    ])
+    const { stage, camera } = setUp(items, 6, 120, 100)
+    const picture = new Picture()
+    picture.render(stage, camera, { scale: 1, samples: 1 })
+    const picker = new Picker()
+    let met = 0
+    let wrong = 0
+    for (let y = 0; y < 100; y++)
+      for (let x = 0; x < 120; x++) {
+        const code = picture.samples.code[120 * y + x]!
+        const item = picker.itemAt(stage, camera, x + 0.5, y + 0.5)
+        if (item >= 0) met++
+        // Only an outline may fall to either side.
+        if (item !== (code === 0 ? -1 : itemOf(code))) wrong++
+      }
+    expect(met).toBeGreaterThan(2000)
+    expect(wrong).toBe(0)
+  })
+
+  test('follows when panels are pulled apart', () => {
+    const stage = new Stage()
+    stage.setScene(cubeItems())
+    stage.update()
+    const camera = new Camera([0, 0, 1])
+    camera.resize(400, 400)
+    camera.setSpread(2.5)
+    const picker = new Picker()
+    // Just inside the rim of the front side once it has come nearer, beside the closed cube.
+    stage.setExplode(1)
+    stage.update()
+    const { x, y } = camera.project(stage.place([0.99, 0, 1], 4))
+    const picks = [0, 1, 0].map((fraction) => {
+      stage.setExplode(fraction)
+      stage.update()
+      return picker.itemAt(stage, camera, x, y)
+    })
+    expect(picks).toEqual([-1, 4, -1])
+  })
+
   test('hidden kinds, hidden items and ghosts are looked through', () => {
     const stage = new Stage()
     stage.setScene(cubeItems())

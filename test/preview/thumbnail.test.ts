@@ -1,4 +1,5 @@
 import { describe, expect, test } from 'vitest'
+import { cross, dot, norm } from '../../src/geometry/vec3'
 import { Camera } from '../../src/preview/camera'
 import type { Pixels } from '../../src/preview/picture'
 import { faceItems, renderThumbnail } from '../../src/preview/thumbnail'
@@ -88,6 +89,21 @@ describe('thumbnails', () => {
 
 describe('all 75 uniform polyhedra', () => {
   const ids = listSolids().map((facts) => facts.id)
+
+  test('raw faces become items with outward normals and rings counter-clockwise about them', () => {
+    for (const id of ids)
+      for (const { normal, rings } of faceItems(buildSolid(id), colours)) {
+        const [outer] = rings
+        let area = 0
+        outer!.forEach((p, i) => {
+          const q = outer![(i + 1) % outer!.length]!
+          area += dot(cross(p, q), normal)
+        })
+        expect(norm(normal)).toBeCloseTo(1, 12)
+        expect(dot(normal, outer![0]!)).toBeGreaterThan(-1e-9)
+        expect(area).toBeGreaterThan(0.1)
+      }
+  })
 
   test('there are 75', () => {
     expect(ids.length).toBe(75)
