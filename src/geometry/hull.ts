@@ -69,6 +69,12 @@ export const turnedBox = (
   return { minX, minY, maxX, maxY }
 }
 
+/** Whether points turned by the angle (radians) fit into width × height, upright. */
+export const fitsAt = (points: ArrayLike<number>, angle: number, width: number, height: number): boolean => {
+  const { minX, minY, maxX, maxY } = turnedBox(points, Math.cos(angle), Math.sin(angle))
+  return maxX - minX <= width && maxY - minY <= height
+}
+
 /**
  * An angle in radians, 0 ≤ angle < π, by which the convex hull can be turned so that it fits into width × height, or
  * null if there is none. Exact: between two directions of hull sides (modulo a right angle) width and height are single

@@ -8,6 +8,7 @@ import { edgeEnds, type PanelGraph, panelGraph } from './panel-graph'
 import type { FitRectangle } from './patch'
 import { searchFolds } from './search'
 import { type NetTemplate, nameTemplates } from './templates'
+import { refuseTooLarge } from './too-large'
 import type { Piece } from './types'
 
 export interface CutOptions {
@@ -33,10 +34,14 @@ export interface Cut {
 /**
  * Cuts a skin into pieces: every panel in exactly one, every piece a tree of folds that lies flat, unmirrored, without
  * overlap, and fits the rectangle. Deterministic. See `search.ts` for the methods.
+ *
+ * @throws InputError when a single panel is larger than the rectangle
+ * @throws Cancelled out of `progress`
  */
 export const cutIntoPieces = (skin: Skin, options: CutOptions, progress: Progress = noProgress): Cut => {
   const { edgeMm, fit, perKind = false, tabRoomMm = 3, seed = 1 } = options
   const graph = panelGraph(skin, edgeMm)
+  refuseTooLarge(skin, graph, fit)
   const effort = options.effort ?? usualEffort(graph.flat.length)
   const folds = searchFolds(graph, { fit: fitWithoutTabs(fit, tabRoomMm), perKind, effort, seed }, progress)
   return { pieces: layOutPieces(graph, folds, fit), folds }

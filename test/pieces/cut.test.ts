@@ -1,7 +1,7 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { gluingOrder, renumber } from '../../src/assembly'
-import { Cancelled } from '../../src/errors'
+import { Cancelled, InputError } from '../../src/errors'
 import { signedArea } from '../../src/geometry/vec2'
 import { assignTabs, cutIntoPieces, flattenPanels, piecesOf, validatePieces } from '../../src/pieces'
 import type { Skin } from '../../src/skin/types'
@@ -65,10 +65,13 @@ describe('cutIntoPieces', () => {
     expect(whole(cube(), 62).pieces.length).toBe(1)
   })
 
-  it('leaves panels that are larger than the sheet by themselves and says that they do not fit', () => {
-    const { pieces, failed } = whole(cube(), 200)
-    expect(pieces).toHaveLength(6)
-    expect(failed.map((c) => c.name)).toContain('pieces fit the sheet with their tabs')
+  it('refuses panels larger than the sheet and names the greatest height', () => {
+    const cut = (edgeMm: number) => cutIntoPieces(cube(), { edgeMm, fit: a4, effort: 10 })
+    expect(() => cut(200)).toThrow(InputError)
+    // The square just fits upright: edge 190, height (through the vertices) 190 √3 = 329.09 mm.
+    expect(() => cut(200)).toThrow(/at most 329 mm/)
+    expect(cut(190).pieces).toHaveLength(6)
+    expect(() => cut(190.01)).toThrow(InputError)
   })
 
   it('keeps any random body whole: seed 31', () => {
