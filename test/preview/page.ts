@@ -19,6 +19,7 @@ const scenes = {
   stars: () => faceItems(shapes.smallStellatedDodecahedron, colours),
   openStars: () => faceItems(shapes.smallStellatedDodecahedron, colours, 'evenodd'),
   random: () => shapes.randomItems(40, seeded(7)),
+  doubled: () => shapes.backToBack(shapes.randomItems(16, seeded(8))),
   many: () => shapes.randomItems(1700, seeded(11)),
 } satisfies Record<string, () => SceneItem[]>
 

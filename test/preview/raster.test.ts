@@ -9,6 +9,7 @@ import type { SceneItem } from '../../src/preview/types'
 import { randomDirection, randomRotation, seeded } from '../support/random'
 import { type Ray, rayCaster } from './ray-caster'
 import {
+  backToBack,
   cubeItems,
   greatDodecahedron,
   randomItems,
@@ -109,17 +110,7 @@ describe('a pick is what an independent ray caster meets', () => {
     })
 
   test('is what the z-buffer shows, also where two sides lie back to back, seed 6', () => {
-    const random = seeded(6)
-    const items = randomItems(20, random).flatMap((item): SceneItem[] => [
-      { ...item, id: 2 * item.id, kind: 'all' },
-      {
-        ...item,
-        id: 2 * item.id + 1,
-        kind: 'all',
-        normal: [-item.normal[0], -item.normal[1], -item.normal[2]],
-        rings: [[...item.rings[0]!].reverse()],
-      },
-    ])
+    const items = backToBack(randomItems(20, seeded(6))).map((item) => ({ ...item, kind: 'all' }))
     const { stage, camera } = setUp(items, 6, 120, 100)
     const picture = new Picture()
     picture.render(stage, camera, { scale: 1, samples: 1 })

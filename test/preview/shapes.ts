@@ -111,3 +111,16 @@ export const randomItems = (count: number, next: () => number): SceneItem[] =>
       .padStart(6, '0')}`
     return { id: 100 + id, group: id % 7, kind: `k${id % 5}`, colour: hex, normal: normalize(square), rings: [ring] }
   })
+
+/** Every item with a second one on its back, in another colour and with ids 1000 higher. */
+export const backToBack = (items: readonly SceneItem[]): SceneItem[] =>
+  items.flatMap((item): SceneItem[] => [
+    {
+      ...item,
+      id: item.id + 1000,
+      colour: '#4080c0',
+      normal: scale(item.normal, -1),
+      rings: item.rings.map((ring) => [...ring].reverse()),
+    },
+    item,
+  ])

@@ -9,7 +9,7 @@ import { type Lane, lanes, launch } from '../browser/chromium'
 import { type Served, servePages } from '../browser/serve'
 import { seeded } from '../support/random'
 import type { Bench } from './page'
-import { randomItems, smallStellatedDodecahedron, windowItems } from './shapes'
+import { backToBack, randomItems, smallStellatedDodecahedron, windowItems } from './shapes'
 
 declare const window: { bench: Bench }
 
@@ -101,6 +101,7 @@ const scenes: [Parameters<Bench['open']>[0], SceneItem[]][] = [
   ['windows', windowItems()],
   ['openStars', faceItems(smallStellatedDodecahedron, ['#d98c3f', '#4f81bd', '#9bbb59'], 'evenodd')],
   ['random', randomItems(40, seeded(7))],
+  ['doubled', backToBack(randomItems(16, seeded(8)))],
 ]
 
 describe('with and without WebGL', () => {
