@@ -98,7 +98,9 @@ export class Stage {
     this.stale.shown = true
   }
 
+  /** @throws InputError if a colour cannot be read */
   setLit(lit: readonly Lit[]): void {
+    for (const { accent } of lit) if (accent !== undefined) parseHex(accent)
     this.lit = lit
     this.stale.marks = true
   }
@@ -108,7 +110,10 @@ export class Stage {
     this.stale.marks = true
   }
 
+  /** @throws InputError if a colour cannot be read */
   setTheme(theme: Partial<PreviewTheme>): void {
+    // Read here, so that a mistake shows where it is made and not in some later frame.
+    for (const colour of Object.values(theme)) parseHex(colour)
     this.theme = { ...this.theme, ...theme }
     this.stale.edges = true
   }

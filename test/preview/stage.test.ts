@@ -72,6 +72,8 @@ describe('a scene made ready', () => {
     expect(() => buildModel([{ ...item!, colour: 'reddish' }])).toThrow(/reddish.*#rrggbb/)
     expect(() => buildModel([{ ...item!, normal: [Number.NaN, 0, 0] }])).toThrow(/no usable shape.*"item":0/)
     expect(() => buildModel([item!, item!])).toThrow(/same id/)
+    expect(() => new Stage().setTheme({ accent: 'rgb(1, 2, 3)' })).toThrow(/rgb\(1, 2, 3\).*#rrggbb/)
+    expect(() => new Stage().setLit([{ items: new Set(), accent: '' }])).toThrow(InputError)
   })
 
   test('an empty scene draws an empty picture', () => {
