@@ -49,9 +49,14 @@ export interface NestedSheet {
   readonly placed: readonly Placed[]
 }
 
+/** Placements are tried with all turns, and with those alone that lay a side of the hull along the sheet. */
+type Turns = 'all' | 'flush'
+
 /** One item turned one way, as a mask; (dx, dy) takes the turned item's lower left corner to the origin. */
 interface Pose {
   readonly rotation: number
+  /** A side of the hull lies along the sheet, or this is the roomiest turn. */
+  readonly flush: boolean
   readonly mask: Mask
   readonly dx: number
   readonly dy: number
@@ -77,8 +82,6 @@ export const nest = (
   const cell = options.cellMm ?? 0.5
   const half = options.gapMm / 2
   const inner = { w: options.widthMm - 2 * options.marginMm, h: options.heightMm - 2 * options.marginMm }
-  // The board reaches half a gap over the margins, since masks are grown by half a gap on every side.
-  const size = { w: Math.ceil((inner.w + 2 * half) / cell) + 1, h: Math.ceil((inner.h + 2 * half) / cell) + 1 }
   const shapes = new Map<string, Shape>()
   const shapeOf = items.map((item, i) => {
     progress('sheets', (0.3 * i) / items.length)
@@ -87,32 +90,69 @@ export const nest = (
     if (!shape) shapes.set(key, (shape = prepare(item, key, options, inner, cell, half)))
     return shape
   })
-  const groups = [...new Set(items.map((i) => i.group))]
-  const sheets: { group: string; board: Board; placed: Placed[]; refused: Set<string> }[] = []
+  // The board reaches half a gap over the margins, since masks are grown by half a gap on every side.
+  const size = { w: Math.ceil((inner.w + 2 * half) / cell) + 1, h: Math.ceil((inner.h + 2 * half) / cell) + 1 }
+  let best: Sheet[] | null = null
+  for (const [k, turns] of (['flush', 'all'] as const).entries()) {
+    const report = (done: number): void => progress('sheets', 0.3 + 0.35 * (k + done / items.length))
+    const made = fill(items, shapeOf, options, { inner, cell, size, turns }, report)
+    if (!best || made.length < best.length) best = made
+  }
+  return best!.map(({ group, placed }) => ({ group, placed: placed.sort((a, b) => a.item - b.item) }))
+}
+
+interface Sheet {
+  readonly group: string
+  readonly board: Board
+  readonly placed: Placed[]
+  /** Shapes that found no place: as nothing is ever taken off, they need not be tried again. */
+  readonly refused: Set<string>
+}
+
+interface Frame {
+  readonly inner: { w: number; h: number }
+  readonly cell: number
+  readonly size: { w: number; h: number }
+  readonly turns: Turns
+}
+
+const fill = (
+  items: readonly NestItem[],
+  shapeOf: readonly Shape[],
+  options: NestOptions,
+  frame: Frame,
+  report: (done: number) => void,
+): Sheet[] => {
+  const { cell, size } = frame
+  const sheets: Sheet[] = []
   let done = 0
-  for (const group of groups) {
+  for (const group of new Set(items.map((i) => i.group))) {
     const order = items.map((_, i) => i).filter((i) => items[i]!.group === group)
     // Equal areas keep gluing order, so that neighbours in the order tend to share a sheet.
     order.sort((a, b) => Math.round(shapeOf[b]!.areaMm2) - Math.round(shapeOf[a]!.areaMm2) || a - b)
     for (const i of order) {
-      progress('sheets', 0.3 + (0.7 * done++) / items.length)
+      report(done++)
       const shape = shapeOf[i]!
       let spot: Spot | null = null
-      let sheet = sheets.find((s) => {
-        if (s.group !== group || s.refused.has(shape.key)) return false
-        spot = s.board.free * cell * cell < shape.areaMm2 ? null : bestSpot(s.board, shape, inner, cell)
-        if (!spot) s.refused.add(shape.key)
-        return spot !== null
-      })
-      if (!sheet) {
-        sheet = { group, board: new Board(size.w, size.h), placed: [], refused: new Set() }
-        spot = bestSpot(sheet.board, shape, inner, cell)
-        if (!spot) throw new BrokenPromise('A piece does not fit an empty sheet.', { item: items[i]!.id })
-        sheets.push(sheet)
+      let home: Sheet | null = null
+      for (const sheet of sheets) {
+        if (sheet.group !== group || sheet.refused.has(shape.key)) continue
+        if (sheet.board.free * cell * cell >= shape.areaMm2) spot = bestSpot(sheet.board, shape, frame)
+        if (spot) {
+          home = sheet
+          break
+        }
+        sheet.refused.add(shape.key)
       }
-      const { pose, x, y } = spot as unknown as Spot
-      sheet.board.put(pose.mask, x, y)
-      sheet.placed.push({
+      if (!home || !spot) {
+        home = { group, board: new Board(size.w, size.h), placed: [], refused: new Set() }
+        spot = bestSpot(home.board, shape, frame)
+        if (!spot) throw new BrokenPromise('A piece does not fit an empty sheet.', { item: items[i]!.id })
+        sheets.push(home)
+      }
+      const { pose, x, y } = spot
+      home.board.put(pose.mask, x, y)
+      home.placed.push({
         item: items[i]!.id,
         x: options.marginMm + x * cell + pose.dx,
         y: options.marginMm + y * cell + pose.dy,
@@ -121,7 +161,7 @@ export const nest = (
       })
     }
   }
-  return sheets.map(({ group, placed }) => ({ group, placed: placed.sort((a, b) => a.item - b.item) }))
+  return sheets
 }
 
 interface Spot {
@@ -131,10 +171,11 @@ interface Spot {
 }
 
 /** The lowest free place over all poses: least upper rim, then leftmost. */
-const bestSpot = (board: Board, shape: Shape, inner: { w: number; h: number }, cell: number): Spot | null => {
+const bestSpot = (board: Board, shape: Shape, { inner, cell, turns }: Frame): Spot | null => {
   let best: Spot | null = null
   let bestTop = Number.POSITIVE_INFINITY
   for (const pose of shape.poses) {
+    if (turns === 'flush' && !pose.flush) continue
     const lastX = Math.floor((inner.w - pose.widthMm) / cell + 1e-6)
     const lastY = Math.floor((inner.h - pose.heightMm) / cell + 1e-6)
     if (lastX < 0) continue
@@ -165,11 +206,9 @@ const prepare = (
   const flat: number[] = []
   for (const ring of region) for (const [x, y] of ring) flat.push(x, y)
   const hull = convexHull(flat)
-  const angles = turnsOf(hull, options.turns ?? 16)
   const roomiest = (roomiestAngle(hull, inner.w, inner.h) * 180) / Math.PI
-  for (const a of [roomiest, roomiest + 180]) if (!angles.some((b) => turnApart(a, b) < 1e-9)) angles.push(a % 360)
   const poses: Pose[] = []
-  for (const rotation of angles) {
+  for (const { rotation, flush } of turnsOf(hull, options.turns ?? 16, [roomiest, roomiest + 180])) {
     const c = Math.cos((rotation * Math.PI) / 180)
     const s = Math.sin((rotation * Math.PI) / 180)
     const turn = ([x, y]: Vec2): Vec2 => [c * x - s * y, s * x + c * y]
@@ -189,6 +228,7 @@ const prepare = (
       }),
     )
     poses.push({
+      flush,
       rotation: ((rotation % 360) + 360) % 360,
       mask: rasterize(placed, cell),
       dx: -left,
@@ -205,8 +245,12 @@ const turnApart = (a: number, b: number): number => {
   return Math.min(d, 360 - d)
 }
 
-/** Degrees: even steps, and turns that lay the longest sides of the hull along the bottom of the sheet. */
-const turnsOf = (hull: ArrayLike<number>, steps: number): number[] => {
+/** Degrees: the given ones, turns that lay the longest sides of the hull along the sheet, and even steps between. */
+const turnsOf = (
+  hull: ArrayLike<number>,
+  steps: number,
+  first: readonly number[],
+): { rotation: number; flush: boolean }[] => {
   const sides: { angle: number; length: number }[] = []
   const n = hull.length
   for (let i = 0; i < n; i += 2) {
@@ -215,12 +259,14 @@ const turnsOf = (hull: ArrayLike<number>, steps: number): number[] => {
     sides.push({ angle: (-Math.atan2(dy, dx) * 180) / Math.PI, length: Math.hypot(dx, dy) })
   }
   sides.sort((a, b) => b.length - a.length || a.angle - b.angle)
-  const angles: number[] = []
-  const consider = (angle: number): void => {
-    const turned = ((angle % 360) + 360) % 360
-    if (!angles.some((b) => turnApart(turned, b) < 2)) angles.push(turned)
+  const turns: { rotation: number; flush: boolean }[] = []
+  const consider = (angle: number, flush: boolean, apart: number): void => {
+    const rotation = ((angle % 360) + 360) % 360
+    if (!turns.some((t) => turnApart(rotation, t.rotation) < apart)) turns.push({ rotation, flush })
   }
-  for (const { angle } of sides.slice(0, 4)) for (const quarter of [0, 90, 180, 270]) consider(angle + quarter)
-  for (let k = 0; k < steps; k++) consider((360 * k) / steps)
-  return angles
+  for (const angle of first) consider(angle, true, 1e-9)
+  for (const { angle } of sides.slice(0, 4))
+    for (const quarter of [0, 90, 180, 270]) consider(angle + quarter, true, 0.01)
+  for (let k = 0; k < steps; k++) consider((360 * k) / steps, false, 2)
+  return turns
 }

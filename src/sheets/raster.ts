@@ -41,11 +41,13 @@ export const rasterize = (rings: readonly Ring2[], cellMm: number): Mask => {
     ring.forEach((a, i) => {
       const b = ring[(i + 1) % ring.length]!
       const [low, high] = a[1] <= b[1] ? [a, b] : [b, a]
-      const first = Math.max(0, Math.floor(low[1] / cellMm))
-      const last = Math.min(height - 1, Math.floor(high[1] / cellMm))
+      // Rounding may put an edge a hair below the first row or above the last: it still counts to that row.
+      const rowOf = (y: number): number => Math.max(0, Math.min(height - 1, Math.floor(y / cellMm)))
+      const first = rowOf(low[1])
+      const last = rowOf(high[1])
       for (let row = first; row <= last; row++) {
-        const s = at(low, high, row * cellMm)
-        const t = at(low, high, (row + 1) * cellMm)
+        const s = row === first ? low[0] : at(low, high, row * cellMm)
+        const t = row === last ? high[0] : at(low, high, (row + 1) * cellMm)
         mark(row, Math.min(s, t), Math.max(s, t))
       }
     })
