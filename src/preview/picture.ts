@@ -6,8 +6,9 @@
 import { backBias, layerBias, lineBias } from './bias'
 import type { Camera } from './camera'
 import { parseHex, type Rgb } from './colour'
+import type { LineSet } from './lines'
 import { clearLayer, createLayer, drawLines, drawTriangles, type Layer, type ScreenVertices } from './raster'
-import { ghostAlpha, hatchPx, type LineSet, type Stage, tonesPerItem } from './stage'
+import { ghostAlpha, hatchPx, type Stage, tonesPerItem } from './stage'
 
 /** RGBA, not premultiplied, rows from the top: what `ImageData` takes. */
 export interface Pixels {

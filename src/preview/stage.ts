@@ -6,6 +6,7 @@ import { cross, dot, type Mat3, scale, sub, type Vec3 } from '../geometry/vec3'
 import type { Camera } from './camera'
 import { parseHex, type Rgb } from './colour'
 import { brightness, lightIn } from './light'
+import { edgeLines, type LineSet, type LineStyle, outlineOf, seamLines } from './lines'
 import { buildModel, type Model } from './model'
 import type { Lit, PreviewTheme, SceneItem, SceneOptions, SeamLine } from './types'
 
@@ -16,33 +17,12 @@ export const defaultTheme: PreviewTheme = {
   ghost: '#8b9096',
 }
 
-export interface LineStyle {
-  /** CSS px. */
-  readonly width: number
-  readonly colour: Rgb
-  readonly alpha: number
-  /** Period of dashes (half on, half off) in CSS px; 0 solid. */
-  readonly dash: number
-  /** 'surface': hidden by what is in front; 'through': seen through the model; 'ghost': hidden by ghosts too. */
-  readonly depth: 'surface' | 'through' | 'ghost'
-  /** Drawn weaker where edges crowd on the screen (see `lineAlpha`). */
-  readonly thins: boolean
-}
-
-export interface LineSet {
-  readonly style: LineStyle
-  /** x, y, z of both ends, line after line, centred and scaled. */
-  readonly ends: Float64Array
-}
-
 /** Tones per item: outside, inside, and the same two for the stripes of the hatch; RGBA each. */
 export const tonesPerItem = 4
 /** Hatch: stripes at 45 degrees, this wide in CSS px across the diagonal step. */
 export const hatchPx = 4
 const hatchStrength = 0.75
 export const ghostAlpha = 0.14
-
-const hiddenDash = 6
 
 export class Stage {
   model: Model = buildModel([])
@@ -123,10 +103,21 @@ export class Stage {
     if (this.stale.positions) this.movePositions()
     if (this.stale.shown) this.chooseTriangles()
     const newEdges = this.stale.positions || this.stale.shown || this.stale.edges
-    if (newEdges) this.edgeSets = this.edgeLines()
+    const posed = { model: this.model, positions: this.positions, isApart: this.explosion > 0 }
+    if (newEdges)
+      this.edgeSets = edgeLines(
+        posed,
+        (i) => this.isSolid(i),
+        (i) => this.isGhost(i),
+        this.theme,
+      )
     if (newEdges || this.stale.marks) {
       this.markHatched()
-      this.lines = [...this.edgeSets, ...this.litLines(), ...this.seamLines()].filter((set) => set.ends.length > 0)
+      const outlines = this.lit.flatMap((lit) =>
+        outlineOf(posed, (i) => this.isLit(lit, i), lit.accent ?? this.theme.accent, this.theme),
+      )
+      const seams = seamLines(this.seams, (end, item) => this.place(end, item), this.theme)
+      this.lines = [...this.edgeSets, ...outlines, ...seams].filter((set) => set.ends.length > 0)
       this.versions.lines++
     }
     this.stale = { positions: false, shown: false, edges: false, marks: false }
@@ -231,100 +222,6 @@ export class Stage {
     return out
   }
 
-  /** Edges to draw of the items wanted: one per place, or one per item once the items are apart. */
-  private gatherEdges(
-    wanted: (item: number) => boolean,
-    keep: (edgeClass: number, item: number) => boolean,
-  ): Float64Array {
-    const { items, edges, edgeStart, edgeClass, edgeClasses, mover } = this.model
-    const apart = this.explosion > 0
-    const drawnWith = new Int32Array(edgeClasses).fill(-1)
-    const out: number[] = []
-    items.forEach((_, i) => {
-      if (!wanted(i)) return
-      for (let e = edgeStart[i]!; e < edgeStart[i + 1]!; e++) {
-        const c = edgeClass[e]!
-        const owner = apart ? mover[i]! : 0
-        if (drawnWith[c] === owner || !keep(c, i)) continue
-        drawnWith[c] = owner
-        for (let end = 0; end < 2; end++) {
-          const v = 3 * edges[2 * e + end]!
-          out.push(this.positions[v]!, this.positions[v + 1]!, this.positions[v + 2]!)
-        }
-      }
-    })
-    return Float64Array.from(out)
-  }
-
-  private edgeLines(): LineSet[] {
-    const { items, edgeStart, edgeClass, edgeClasses } = this.model
-    // A class whose items belong to one piece is a fold, drawn lighter; −2 none yet, −3 several pieces.
-    const groupOf = new Int32Array(edgeClasses).fill(-2)
-    items.forEach((item, i) => {
-      for (let e = edgeStart[i]!; e < edgeStart[i + 1]!; e++) {
-        const c = edgeClass[e]!
-        if (groupOf[c] === -2) groupOf[c] = item.group
-        else if (groupOf[c] !== item.group) groupOf[c] = -3
-      }
-    })
-    const grouped = items.some((item) => item.group >= 0)
-    const isFold = (c: number): boolean => grouped && groupOf[c]! >= 0
-    const edge = parseHex(this.theme.edge)
-    const ghost = parseHex(this.theme.ghost)
-    const solid = (i: number): boolean => this.isSolid(i)
-    const style = { colour: edge, dash: 0, depth: 'surface', thins: true } as const
-    return [
-      { style: { ...style, width: 0.8, alpha: 0.6 }, ends: this.gatherEdges(solid, (c) => isFold(c)) },
-      {
-        style: { ...style, width: 1.1, alpha: grouped ? 0.95 : 0.75 },
-        ends: this.gatherEdges(solid, (c) => !isFold(c)),
-      },
-      {
-        style: { width: 0.8, colour: ghost, alpha: 0.5, dash: 0, depth: 'ghost', thins: true },
-        ends: this.gatherEdges(
-          (i) => this.isGhost(i),
-          () => true,
-        ),
-      },
-    ]
-  }
-
-  private litLines(): LineSet[] {
-    const { items, edgeStart, edgeClass, edgeClasses, mover } = this.model
-    const casing = parseHex(this.theme.casing)
-    return this.lit.flatMap((lit) => {
-      const members = items.flatMap((_, i) => (this.isLit(lit, i) ? [i] : []))
-      const isMember = new Uint8Array(items.length)
-      for (const i of members) isMember[i] = 1
-      // An edge between two lit items is inside the lit part, unless the two have been pulled apart.
-      const owners = new Map<number, number[]>()
-      for (const i of members)
-        for (let e = edgeStart[i]!; e < edgeStart[i + 1]!; e++) {
-          const c = edgeClass[e]!
-          const known = owners.get(c)
-          if (known) known.push(i)
-          else owners.set(c, [i])
-        }
-      const isOutline = (c: number, i: number): boolean =>
-        (owners.get(c) ?? []).filter((j) => this.explosion === 0 || mover[j] === mover[i]).length === 1
-      if (edgeClasses === 0) return []
-      const ends = this.gatherEdges((i) => isMember[i] === 1, isOutline)
-      return marked(ends, parseHex(lit.accent ?? this.theme.accent), casing, 3)
-    })
-  }
-
-  private seamLines(): LineSet[] {
-    const accent = parseHex(this.theme.accent)
-    const casing = parseHex(this.theme.casing)
-    const gather = (strong: boolean): Float64Array =>
-      Float64Array.from(
-        this.seams
-          .filter((seam) => (seam.strong ?? false) === strong)
-          .flatMap((seam) => seam.ends.flatMap((end) => [...this.place(end, seam.item)])),
-      )
-    return [...marked(gather(false), accent, casing, 4), ...marked(gather(true), accent, casing, 7)]
-  }
-
   /**
    * Opacity of a line: one that should be thinner than a pixel is drawn weaker instead, and edges are drawn weaker where
    * they crowd on the screen.
@@ -385,14 +282,4 @@ export class Stage {
   private vertex(v: number): Vec3 {
     return [this.positions[3 * v]!, this.positions[3 * v + 1]!, this.positions[3 * v + 2]!]
   }
-}
-
-/** A marked line: dashes where it is hidden, then a casing, then the accent itself. */
-const marked = (ends: Float64Array, accent: Rgb, casing: Rgb, width: number): LineSet[] => {
-  const line = { colour: accent, dash: 0, depth: 'surface', thins: false } as const
-  return [
-    { style: { ...line, width: Math.max(1.4, width / 2), alpha: 0.9, dash: hiddenDash, depth: 'through' }, ends },
-    { style: { ...line, width: width + 2.5, alpha: 0.9, colour: casing }, ends },
-    { style: { ...line, width, alpha: 1 }, ends },
-  ]
 }

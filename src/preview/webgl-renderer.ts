@@ -24,8 +24,9 @@ import {
 import { backBias, layerBias, lineBias } from './bias'
 import type { Camera } from './camera'
 import { parseHex } from './colour'
+import type { LineSet } from './lines'
 import type { Renderer } from './renderer'
-import { ghostAlpha, hatchPx, type LineSet, type Stage, tonesPerItem } from './stage'
+import { ghostAlpha, hatchPx, type Stage, tonesPerItem } from './stage'
 import { lineFragment, lineVertex, panelFragment, panelVertex } from './webgl-shaders'
 
 /** Texels per row of the tone texture. */
