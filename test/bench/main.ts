@@ -1,8 +1,13 @@
 /** `npm run bench -- skin|union|plan …`, all without a name. Ratios within one run, for people; no test depends on it. */
+import { benchPlan } from './plan'
 import { benchSkin } from './skin'
 import { benchUnion } from './union'
 
-const benches: Readonly<Record<string, () => void | Promise<void>>> = { skin: benchSkin, union: benchUnion }
+const benches: Readonly<Record<string, () => void | Promise<void>>> = {
+  skin: benchSkin,
+  union: benchUnion,
+  plan: benchPlan,
+}
 
 const asked = process.argv.slice(2)
 const unknown = asked.find((name) => !Object.hasOwn(benches, name))
