@@ -1,10 +1,20 @@
-import { mkdirSync, rmSync, writeFileSync } from 'node:fs'
-import { join, resolve } from 'node:path'
+import { existsSync, mkdirSync, rmSync, writeFileSync } from 'node:fs'
+import { dirname, join, resolve } from 'node:path'
 import { InputError } from '../errors'
 
 /** Where a path that was typed is meant to lead: npm changes into the project's folder, and says where it was called. */
 const typedFrom = (): string =>
   (process.env.npm_lifecycle_event === 'batch' ? process.env.INIT_CWD : undefined) ?? process.cwd()
+
+/**
+ * Makes a folder and those above it one at a time. Node's own recursive mkdir never comes back where a file system says
+ * that a folder is missing right after it was asked to make it (such as /proc).
+ */
+const makeFolders = (folder: string): void => {
+  if (existsSync(folder)) return
+  if (dirname(folder) !== folder) makeFolders(dirname(folder))
+  mkdirSync(folder)
+}
 
 /**
  * Makes the folder if needed and tries a file in it, before any long work is done.
@@ -13,7 +23,7 @@ const typedFrom = (): string =>
 export const writableFolder = (typed: string): string => {
   const folder = resolve(typedFrom(), typed)
   try {
-    mkdirSync(folder, { recursive: true })
+    makeFolders(folder)
     const probe = join(folder, `.probe-${process.pid}`)
     writeFileSync(probe, '')
     rmSync(probe)
