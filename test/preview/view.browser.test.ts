@@ -189,6 +189,25 @@ describe('with and without WebGL', () => {
     expect(differs(shots[0]!, shots[1]!, 60)).toBeLessThan(0.003)
   })
 
+  test.each(lanes)('%s: what is lit on the far side shows through as dashes', async (lane) => {
+    const page = await openScene(lane, 'cube')
+    const bare = await screenshot(page)
+    // Side −x, at the back from the first direction.
+    expect((await pickGrid(page, 10)).includes(1)).toBe(false)
+    await page.evaluate(() => window.bench.view.setLit({ items: new Set([1]) }))
+    const lit = await screenshot(page)
+    const changed: number[] = []
+    for (let i = 0; i < bare.length; i += 3) if (Math.abs(bare[i]! - lit[i]!) > 25) changed.push(i / 3)
+    // Dashed lines across the sides in front: more than the stretch on the silhouette alone.
+    const rows = new Set(changed.map((at) => Math.floor(at / width)))
+    const columns = new Set(changed.map((at) => at % width))
+    expect(changed.length).toBeGreaterThan(300)
+    const inMiddle = changed.filter((at) => Math.hypot((at % width) - 300, Math.floor(at / width) - 240) < 110)
+    expect(inMiddle.length).toBeGreaterThan(60)
+    expect(rows.size).toBeGreaterThan(100)
+    expect(columns.size).toBeGreaterThan(50)
+  })
+
   test.each(lanes)('%s: ghosts, light, pulling apart and hidden kinds draw and pick alike', async (lane) => {
     const page = await openScene(lane, 'cube')
     const before = await screenshot(page)
@@ -217,7 +236,7 @@ describe('with and without WebGL', () => {
 })
 
 describe.each(lanes)('%s: pointer, touch and keys', (lane) => {
-  test('hover, click, drag, wheel', async () => {
+  test('hover, click, drag, shift, wheel', async () => {
     const page = await openScene(lane, 'cube')
     await page.evaluate(() => window.bench.view.lookAt([0, 0, 1], 0))
     await page.mouse.move(300, 240)
@@ -242,6 +261,21 @@ describe.each(lanes)('%s: pointer, touch and keys', (lane) => {
     await page.evaluate(() => window.bench.view.settled())
     expect((await picks(page)).filter((p) => p.event === 'click')).toEqual([])
     expect(await page.evaluate(() => window.bench.view.pickAt(300, 240)?.item)).toBe(1)
+
+    // With Shift the picture moves instead.
+    const middle = (): Promise<{ x: number; y: number }> => page.evaluate(() => window.bench.view.project([0, 0, 0]))
+    const start = await middle()
+    await page.keyboard.down('Shift')
+    await page.mouse.down()
+    for (let x = 440; x >= 400; x -= 10) await page.mouse.move(x, 240 + (440 - x) / 2)
+    await page.mouse.up()
+    await page.keyboard.up('Shift')
+    const end = await middle()
+    // The first few pixels are still a click.
+    expect(end.x - start.x).toBeLessThan(-25)
+    expect(end.x - start.x).toBeGreaterThanOrEqual(-40.001)
+    expect(end.y - start.y).toBeGreaterThan(12)
+    await page.evaluate(() => window.bench.view.resetView())
 
     const size = async (): Promise<number> => (await pickGrid(page, 10)).filter((id) => id !== null).length
     const before = await size()
