@@ -1,6 +1,7 @@
 import { computed, effect, signal } from '@preact/signals'
 import { render } from 'preact'
 import { createPlanner, createPress, type SolidFacts } from '../worker'
+import { keepForOffline } from './offline'
 import { createRouter } from './route'
 import { createWorkshop } from './state/workshop'
 import { openStore } from './storage/database'
@@ -25,7 +26,8 @@ const start = async (): Promise<void> => {
     else trouble.value = `The list of solids could not be made: ${answer.refusal.message}`
   })
   const keeper = await createKeeper(() => openStore())
-  const workshop = await createWorkshop({ keeper, planner: createPlanner(), now: Date.now, newId, rest: 350 })
+  const planner = createPlanner()
+  const workshop = await createWorkshop({ keeper, planner, now: Date.now, newId, rest: 350 })
 
   const spoken = signal('')
   let timer: ReturnType<typeof setTimeout> | undefined
@@ -52,8 +54,9 @@ const start = async (): Promise<void> => {
     workshop.wanted.value = router.place.value.station !== 'shelf'
   })
   // What is pointed at belongs to one station and one plan.
+  const station = computed(() => router.place.value.station)
   effect(() => {
-    void router.place.value.station
+    void station.value
     void workshop.planned.value
     app.pointed.value = nothingPointed
   })
@@ -77,6 +80,12 @@ const start = async (): Promise<void> => {
     </Context.Provider>,
     document.getElementById('app')!,
   )
+
+  // Once the first picture is there: the computation's program, and all of it for days without a network.
+  setTimeout(() => {
+    planner.warm()
+    setTimeout(() => void keepForOffline(), 2000)
+  }, 500)
 }
 
 void start()

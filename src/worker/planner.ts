@@ -1,5 +1,5 @@
 /** The page's end of the planner. */
-import { proxy, wrap } from 'comlink'
+import { proxy, type Remote, wrap } from 'comlink'
 import { Cancelled } from '../errors'
 import type { Plan, PlanChoices } from '../plan/types'
 import type { Answer, PlannerApi, Report } from './protocol'
@@ -13,6 +13,8 @@ export interface Planner {
   compute(choices: PlanChoices, report: Report): Promise<Answer<Plan>>
   /** Stops at once whatever is being computed. */
   cancel(): void
+  /** Loads the program ahead of its first use. */
+  warm(): void
 }
 
 /**
@@ -22,28 +24,35 @@ export interface Planner {
  */
 export const createPlanner = (start: () => Worker = startPlanner): Planner => {
   let worker: Worker | null = null
+  // Wrapped once per worker and held: a wrapping that is thrown away takes the worker's end of the line with it.
+  let remote: Remote<PlannerApi> | null = null
   let stop: ((reason: Error) => void) | null = null
 
   const end = (reason: Error): void => {
     worker?.terminate()
     worker = null
+    remote = null
     stop?.(reason)
     stop = null
+  }
+  const begin = (): Remote<PlannerApi> => {
+    const mine = start()
+    mine.addEventListener('error', (event) => {
+      if (worker === mine) end(new Error(`The computation stopped: ${event.message || 'its worker did not load'}.`))
+    })
+    worker = mine
+    remote = wrap<PlannerApi>(mine)
+    return remote
   }
   return {
     async compute(choices, report) {
       if (stop) end(new Cancelled())
-      worker ??= start()
-      const mine = worker
+      const api = remote ?? begin()
       const stopped = new Promise<never>((_, reject) => {
         stop = reject
-        mine.addEventListener('error', (event) => {
-          if (worker === mine) end(new Error(`The computation stopped: ${event.message || 'its worker did not load'}.`))
-        })
       })
       const myStop = stop
       try {
-        const api = wrap<PlannerApi>(mine)
         const relay = proxy<Report>((stage, fraction) => {
           if (stop === myStop) report(stage, fraction)
         })
@@ -56,7 +65,10 @@ export const createPlanner = (start: () => Worker = startPlanner): Planner => {
       if (!stop) return
       end(new Cancelled())
       // The next computation need not wait for the program to load.
-      worker = start()
+      begin()
+    },
+    warm() {
+      if (!remote) begin()
     },
   }
 }

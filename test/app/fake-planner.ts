@@ -37,6 +37,7 @@ export const fakePlanner = (): FakePlanner => {
       settle.reject(new Cancelled())
       settle = null
     },
+    warm() {},
     async finish(answer) {
       const last = planner.asked.at(-1)!
       settle!.resolve(answer ?? { ok: true, value: planFor(last) })

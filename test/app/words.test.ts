@@ -58,7 +58,8 @@ describe('the docket', () => {
     bad.docket.checks = [{ name: 'x', ok: false, detail: '' }]
     const told = docketFacts(bad, firstChoices('cube')).filter(({ caution }) => caution)
     expect(told.map(({ id }) => id)).toEqual(['narrowest', 'butt', 'checks'])
-    expect(told[0]!.meaning).toBe('tweezers')
+    // A cube of 40 mm edge, 2.1 mm at its height of 69.3 mm.
+    expect(told[0]!.meaning).toBe('tweezers; fingers from 99 mm height')
   })
 })
 

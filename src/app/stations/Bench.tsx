@@ -6,6 +6,7 @@ import { sayChoices } from '../state/choices'
 import { inOrder, nextPiece, seamsToGlue } from '../state/job'
 import type { Planned } from '../state/workshop'
 import { useApp } from '../ui/context'
+import { Dialog } from '../ui/Dialog'
 import { lightPiece } from '../ui/lit-page'
 import { ModelView } from '../ui/ModelView'
 import { PieceFigure } from '../ui/PieceFigure'
@@ -80,7 +81,7 @@ const Others = ({ planned }: { planned: Planned }) => {
 }
 
 const AtWork = ({ planned }: { planned: Planned }) => {
-  const { workshop, router, announce } = useApp()
+  const { workshop, router, prefs, announce } = useApp()
   const { plan } = planned
   const glued = workshop.glued.value
   const tints = workshop.tints.value
@@ -93,6 +94,7 @@ const AtWork = ({ planned }: { planned: Planned }) => {
   const isGlued = glued.includes(piece.id)
   const strong = useSignal<number | null>(null)
   const showRest = useSignal(false)
+  const large = useSignal(false)
   const seams = useMemo(() => seamsToGlue(plan, glued, piece.id), [plan, glued, piece.id])
   const seamSet = useMemo(() => new Set(seams), [seams])
   const creases = useMemo(() => new Map(plan.creases.map((crease) => [crease.id, crease])), [plan])
@@ -135,6 +137,14 @@ const AtWork = ({ planned }: { planned: Planned }) => {
     [plan, piece.id],
   )
 
+  const groups = useMemo(() => {
+    const by = new Map<string, number[]>()
+    for (const id of seams) {
+      const where = sayAcross(plan, piece, id)
+      by.set(where, [...(by.get(where) ?? []), id])
+    }
+    return [...by]
+  }, [seams, piece])
   const sentence = sayStep(plan, piece, seams, sheetOf(plan, piece.id))
   const note = plan.steps.find((entry) => entry.piece === piece.id)?.note ?? ''
   useEffect(() => {
@@ -158,7 +168,8 @@ const AtWork = ({ planned }: { planned: Planned }) => {
     const onKey = (event: KeyboardEvent): void => {
       const target = event.target as HTMLElement
       if (event.ctrlKey || event.metaKey || event.altKey || target.matches('input, textarea, select')) return
-      if (event.key.toLowerCase() === 'g' && !document.querySelector('dialog[open]')) press.current()
+      if (prefs.keys.peek() === 'on' && event.key.toLowerCase() === 'g' && !document.querySelector('dialog[open]'))
+        press.current()
     }
     addEventListener('keydown', onKey)
     return () => removeEventListener('keydown', onKey)
@@ -181,9 +192,17 @@ const AtWork = ({ planned }: { planned: Planned }) => {
             <figure class="take-piece" ref={figure}>
               <PieceFigure plan={plan} piece={piece} tints={tints} now={seamSet} strong={strong.value} />
               <figcaption>
-                Piece {piece.label}
-                {piece.hand !== 'none' && !piece.label.includes(piece.hand) && `, ${piece.hand}`}, {piece.colour} card,
-                template {piece.template}
+                Piece {piece.label}, {piece.colour === 'mixed' ? 'mixed colours' : `${piece.colour} card`}, template{' '}
+                {piece.template}.{' '}
+                <button
+                  type="button"
+                  class="link"
+                  onClick={() => {
+                    large.value = true
+                  }}
+                >
+                  Enlarge
+                </button>
               </figcaption>
             </figure>
           </div>
@@ -224,31 +243,36 @@ const AtWork = ({ planned }: { planned: Planned }) => {
             {sentence}
             {note !== '' && ` ${capital(note)}${/[.!?]$/.test(note) ? '' : '.'}`}
           </p>
-          {seams.length > 0 && (
-            <ul class="row tight seams" aria-label="Seams to glue">
-              {seams.map((id) => (
-                <li key={id}>
-                  <button
-                    type="button"
-                    class="chip"
-                    aria-pressed={strong.value === id}
-                    onPointerEnter={() => {
-                      strong.value = id
-                    }}
-                    onFocus={() => {
-                      strong.value = id
-                    }}
-                    onClick={() => {
-                      strong.value = id
-                      announce(`Seam ${creases.get(id)?.label} is lit.`)
-                    }}
-                  >
-                    <b>{creases.get(id)?.label}</b> {sayAcross(plan, piece, id)}
-                    {plan.docket.buttSeams.includes(id) && ', no tab'}
-                  </button>
-                </li>
+          {groups.length > 0 && (
+            <fieldset class="seams">
+              <legend class="unseen">Seams to glue</legend>
+              {groups.map(([where, ids]) => (
+                <div key={where} class="row tight">
+                  <span class="soft">{where}</span>
+                  {ids.map((id) => (
+                    <button
+                      key={id}
+                      type="button"
+                      class="chip"
+                      aria-pressed={strong.value === id}
+                      onPointerEnter={() => {
+                        strong.value = id
+                      }}
+                      onFocus={() => {
+                        strong.value = id
+                      }}
+                      onClick={() => {
+                        strong.value = id
+                        announce(`Seam ${creases.get(id)?.label} ${where} is lit.`)
+                      }}
+                    >
+                      <b>{creases.get(id)?.label}</b>
+                      {plan.docket.buttSeams.includes(id) && ' no tab'}
+                    </button>
+                  ))}
+                </div>
               ))}
-            </ul>
+            </fieldset>
           )}
         </section>
         <div class="do-buttons">
@@ -266,6 +290,18 @@ const AtWork = ({ planned }: { planned: Planned }) => {
         </div>
       </div>
       <GluingLine order={order} glued={glued} shown={piece.id} next={next?.id ?? null} onShow={show} />
+      {large.value && (
+        <Dialog
+          title={`Piece ${piece.label}`}
+          onClose={() => {
+            large.value = false
+          }}
+        >
+          <div class="enlarged">
+            <PieceFigure plan={plan} piece={piece} tints={tints} now={seamSet} strong={strong.value} />
+          </div>
+        </Dialog>
+      )}
       <p class="figures soft so">
         {done} of {order.length} glued. About {hoursText(plan.docket.hours.glue * (1 - done / order.length))} of gluing
         to come.

@@ -13,9 +13,10 @@ import { Legend } from '../ui/Legend'
 import { lightPiece, pieceAt } from '../ui/lit-page'
 import { ModelView } from '../ui/ModelView'
 import { type Pages, usePageInto, usePages } from '../ui/pages'
+import { problemsOn } from '../ui/problems'
 import { pieceByPanel, planItems } from '../ui/scene'
 import { vantage } from '../ui/vantage'
-import { counted } from '../words/figures'
+import { counted, listed, mmText } from '../words/figures'
 
 /** Steps of the page's zoom; 1 shows the whole page. */
 const zooms = [1, 1.5, 2, 3, 4, 6]
@@ -100,7 +101,11 @@ const Page = ({
   const zoom = useSignal(1)
   const page = pages.list.value[index]
   const light = (): void => lightPiece(host.current, pointed.peek().piece)
-  usePageInto(host, pages, index, light)
+  usePageInto(host, pages, index, () => {
+    const svg = host.current?.querySelector('svg')
+    if (svg && page) svg.insertAdjacentHTML('beforeend', problemsOn(planned.plan, page.pieces, page.heightMm).marks)
+    light()
+  })
   const { piece } = pointed.value
   useEffect(light, [piece])
 
@@ -236,6 +241,27 @@ const PiecesHere = ({ page, planned }: { page: PageSummary | undefined; planned:
           </li>
         ))}
       </ul>
+    </section>
+  )
+}
+
+/** What is marked on the page, in words. */
+const ProblemsHere = ({ page, planned }: { page: PageSummary | undefined; planned: Planned }) => {
+  const here = useMemo(() => (page ? problemsOn(planned.plan, page.pieces, page.heightMm) : null), [page, planned])
+  if (!here || here.marks === '') return null
+  return (
+    <section aria-label="Marked on this page" class="so">
+      {here.bare.length > 0 && (
+        <p>
+          <b>Marked by a dotted line:</b> no room for a tab, glue edge to edge: {listed(here.bare)}.
+        </p>
+      )}
+      {here.narrow && (
+        <p>
+          <b>Marked by a box:</b> the narrowest panel, {mmText(planned.plan.docket.tightest.widthMm)}.
+        </p>
+      )}
+      <p>These marks do not print.</p>
     </section>
   )
 }
@@ -380,6 +406,7 @@ const Laid = ({ planned }: { planned: Planned }) => {
           <Corner pages={pages} planned={planned} index={index} onGo={go} />
         </section>
         <PiecesHere page={pages.list.value[index]} planned={planned} />
+        <ProblemsHere page={pages.list.value[index]} planned={planned} />
         <Download planned={planned} />
         <button
           type="button"

@@ -8,7 +8,7 @@ import { useApp } from '../ui/context'
 import { ModelView } from '../ui/ModelView'
 import { Picture } from '../ui/Picture'
 import { counted, degreesText, figure } from '../words/figures'
-import { capital, sayFaces, sayKnown, saySymmetry } from '../words/solid'
+import { breakable, capital, sayFaces, sayKnown, saySymmetry } from '../words/solid'
 import { filterGroups, passes } from './shelf-filter'
 
 /** Kept while the page is open, so that coming back to the Shelf finds it as it was left. */
@@ -76,7 +76,7 @@ const Card = ({ solid, onPick }: { solid: SolidFacts; onPick: () => void }) => {
         onClick={onPick}
       >
         <Picture solid={solid.id} size={136} />
-        <span class="card-name">{capital(solid.name)}</span>
+        <span class="card-name">{breakable(capital(solid.name))}</span>
         <span class="soft figures">
           No. {solid.index}, {counted(solid.faces, 'face')}
         </span>

@@ -76,6 +76,11 @@ export const Builds = ({ onClose }: { onClose: () => void }) => {
           }}
         />
       </div>
+      {app.trouble.value !== null && (
+        <p role="alert" class="error">
+          {app.trouble.value}
+        </p>
+      )}
       <ul class="builds">
         {present.map((entry) => {
           const isOpen = entry.id === build.value.id

@@ -96,7 +96,8 @@ export const Frame = () => {
           if (!event.shiftKey) workshop.unglue()
         } else if (event.shiftKey) workshop.redo()
         else workshop.undo()
-      } else if (!isCommand && !event.altKey && /^[1-4]$/.test(event.key)) router.go(stations[Number(event.key) - 1]!)
+      } else if (!isCommand && !event.altKey && /^[1-4]$/.test(event.key) && prefs.keys.peek() === 'on')
+        router.go(stations[Number(event.key) - 1]!)
     }
     addEventListener('keydown', onKey)
     return () => removeEventListener('keydown', onKey)

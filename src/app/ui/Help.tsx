@@ -93,6 +93,18 @@ export const Help = ({ onClose }: { onClose: () => void }) => {
               <option value="plain">without WebGL</option>
             </select>
           </label>
+          <label>
+            Single keys (1 to 4, G)
+            <select
+              value={prefs.keys.value}
+              onChange={(event) => {
+                prefs.keys.value = event.currentTarget.value as 'on' | 'off'
+              }}
+            >
+              <option value="on">on</option>
+              <option value="off">off</option>
+            </select>
+          </label>
         </div>
       </section>
       <section>

@@ -28,8 +28,9 @@ export const openFile = async (app: AppContext, file: File): Promise<boolean> =>
   try {
     const opened = readFileText(file.name, await file.text())
     const plans = opened.kind === 'plan' ? [opened.plan] : Object.values(opened.plans)
+    const catalogue = await app.press.catalogue()
     for (const plan of plans) {
-      if (!app.catalogue.value.some(({ id }) => id === plan.model.id))
+      if (catalogue.ok && !catalogue.value.some(({ id }) => id === plan.model.id))
         throw new InputError(`${file.name} is of a solid that this program does not know: ${plan.model.id}.`, file.name)
       const answer = await app.press.check(plan)
       if (!answer.ok) throw new InputError(`${file.name} cannot be used: ${answer.refusal.message}`, file.name)

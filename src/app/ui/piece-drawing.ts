@@ -24,6 +24,8 @@ export interface DrawnPiece {
   }[]
   readonly seams: readonly DrawnSeam[]
   readonly mirrored: boolean
+  /** Where the piece plane's origin lies on its sheet, mm, y up from the bottom. */
+  readonly origin: Point2
 }
 
 /** Piece plane to sheet, then y down. */
@@ -118,5 +120,6 @@ export const drawPiece = (plan: Plan, piece: PlanPiece): DrawnPiece => {
     folds,
     seams,
     mirrored: place.mirrored,
+    origin: [place.x, place.y],
   }
 }

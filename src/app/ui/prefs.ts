@@ -24,6 +24,8 @@ const write = (name: string, value: string): void => {
 export interface Prefs {
   readonly theme: Signal<Theme>
   readonly view: Signal<ViewMode>
+  /** Whether single keys (1 to 4, G) do something; off for those whom they get in the way of. */
+  readonly keys: Signal<'on' | 'off'>
   /** What `theme` comes to at the moment. */
   readonly isDark: Signal<boolean>
 }
@@ -31,6 +33,7 @@ export interface Prefs {
 export const createPrefs = (): Prefs => {
   const theme = signal(read<Theme>('theme', ['system', 'light', 'dark'], 'system'))
   const view = signal(read<ViewMode>('view', ['auto', 'webgl', 'plain'], 'auto'))
+  const keys = signal(read<'on' | 'off'>('keys', ['on', 'off'], 'on'))
   const wish = matchMedia('(prefers-color-scheme: dark)')
   const systemIsDark = signal(wish.matches)
   const isDark = signal(false)
@@ -43,5 +46,6 @@ export const createPrefs = (): Prefs => {
     write('theme', theme.value)
   })
   effect(() => write('view', view.value))
-  return { theme, view, isDark }
+  effect(() => write('keys', keys.value))
+  return { theme, view, keys, isDark }
 }

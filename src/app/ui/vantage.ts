@@ -100,9 +100,7 @@ export const vantage = (plan: Plan, piece: number, shown: ReadonlySet<number>): 
   const outward = (d: Point3): number => (0.2 * area * dot(d, middle)) / far
   const turned = (d: Point3): number =>
     own.reduce((sum, { panel }) => sum + panel.areaMm2 * Math.max(0, dot(panel.normal, d)), 0)
-  const ranked = directions
-    .map((d) => ({ d, score: turned(d) + outward(d) }))
-    .sort((a, b) => b.score - a.score)
+  const ranked = directions.map((d) => ({ d, score: turned(d) + outward(d) })).sort((a, b) => b.score - a.score)
   const places = own.map((wall) => ({ wall, at: insideOf(wall) }))
   const seen = (d: Point3): number =>
     places.reduce((sum, { wall, at }) => {

@@ -17,6 +17,12 @@ export const sayNarrowest = (widthMm: number): string => {
 export const heightForWidth = (widthMm: number, narrowestOverHeight: number): number =>
   Math.ceil(widthMm / narrowestOverHeight)
 
+/** The same, with the height from which fingers would do. */
+export const sayNarrowestAt = (widthMm: number, heightMm: number): string =>
+  widthMm >= narrowest.fingers
+    ? sayNarrowest(widthMm)
+    : `${sayNarrowest(widthMm)}; fingers from ${heightForWidth(narrowest.fingers, widthMm / heightMm)} mm height`
+
 /** Sharpest inner angle, degrees: warn and refuse limits for fingers, tweezers and machine. */
 export const sayAngle = (degrees: number): string => {
   if (degrees >= 20) return 'folds close without trouble'

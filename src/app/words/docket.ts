@@ -1,7 +1,7 @@
 /** The docket: the same facts in the same order, each with what it means for the builder. */
 import type { Plan, PlanChoices } from '../../plan/types'
 import { papers } from '../state/choices'
-import { narrowest, sayAngle, sayHours, sayNarrowest, spareSheets } from './craft'
+import { narrowest, sayAngle, sayHours, sayNarrowestAt, spareSheets } from './craft'
 import { areaText, counted, degreesText, figure, hoursText, lengthText, mmText, percentText } from './figures'
 
 export interface Fact {
@@ -76,7 +76,7 @@ export const docketFacts = (plan: Plan, choices: PlanChoices): Fact[] => {
       id: 'narrowest',
       name: 'Narrowest panel',
       value: mmText(width),
-      meaning: sayNarrowest(width),
+      meaning: sayNarrowestAt(width, plan.model.heightMm),
       caution: width < narrowest.fingers,
       panel: docket.tightest.panel,
     },

@@ -21,6 +21,13 @@ export const saySymmetry = (symbol: string): string =>
 export const sayFaces = ({ facesByKind }: SolidFacts): string =>
   listed(facesByKind.map(({ name, count }) => counted(count, name)))
 
+/** A name that may be broken between its roots, where a narrow card needs it (soft hyphens). */
+export const breakable = (name: string): string =>
+  name.replace(
+    /(icosi|icosa|dodeca|dodeci|dodec|hemi|octa|cubocta|cubi|rhombi|rhomb|ditrigonal|tetra|hexa)(?=[a-z]{4})/g,
+    '$1\u00ad',
+  )
+
 /** Least height at which the narrowest panel is wide enough for fingers. */
 export const leastHeight = (known: KnownFacts): number => heightForWidth(narrowest.fingers, known.narrowest)
 
