@@ -29,8 +29,8 @@ export interface PiecesPlan {
   readonly fit: FitRectangle
 }
 
-/** mm², what two panels may seem to overlap by: clipping rounds to 1e-5 mm, and panels touch along whole edges. */
-const touching = 1e-3
+/** mm², what two parts may seem to overlap by: clipping rounds to 1e-5 mm, and parts touch along edges of up to 300 mm. */
+const touching = 5e-3
 /** mm², what a tab may seem to stick out by: its whole root lies on the outline of the panel behind. */
 const rootTouching = 5e-3
 /** mm: the gap that tabs keep in the flat, as far as it is promised. */

@@ -81,8 +81,12 @@ describe('validatePieces', () => {
       () => ({
         ...good,
         pieces: change(good.pieces, 0, (p) => {
-          const at = (k: number): Vec2 => p.panels[k]!.rings[0]![0]!
-          const [x, y] = [at(1)[0] - at(0)[0] + 0.5, at(1)[1] - at(0)[1] + 0.5]
+          // Middle on middle: of panels laid corner on corner it depends on the net whether they overlap.
+          const middle = (k: number, i: 0 | 1): number => {
+            const ring = p.panels[k]!.rings[0]!
+            return ring.reduce((sum, z) => sum + z[i], 0) / ring.length
+          }
+          const [x, y] = [middle(1, 0) - middle(0, 0), middle(1, 1) - middle(0, 1)]
           return {
             ...p,
             panels: change(p.panels, 0, (q) => ({ ...q, rings: q.rings.map((r) => r.map((z) => shift(z, x, y))) })),
