@@ -128,7 +128,8 @@ describe('hull and fit', () => {
           return box.maxX - box.minX <= w + slack && box.maxY - box.minY <= h + slack
         }
         if (angle !== null) expect(fits(angle, 1e-6)).toBe(true)
-        else expect(Array.from({ length: 540 }, (_, k) => (k * Math.PI) / 540).filter((a) => fits(a, -1e-6))).toEqual([])
+        else
+          expect(Array.from({ length: 540 }, (_, k) => (k * Math.PI) / 540).filter((a) => fits(a, -1e-6))).toEqual([])
         found[angle === null ? 'not' : 'fits']++
       }),
       { seed: 24, numRuns: 300 },
