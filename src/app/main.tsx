@@ -40,6 +40,7 @@ const start = async (): Promise<void> => {
     solid: computed(() => catalogue.value.find(({ id }) => id === workshop.choices.value.solid) ?? null),
     trouble,
     pointed: signal<Pointed>(nothingPointed),
+    sheetsOfBench: signal(false),
     spoken,
     announce(text) {
       clearTimeout(timer)

@@ -20,7 +20,6 @@ describe('figures', () => {
     [mmText(212.7), '213 mm'],
     [lengthText(950), '950 mm'],
     [lengthText(12_345), '12.3 m'],
-    [hoursText(0.004), '1 min'],
     [hoursText(0.5), '30 min'],
     [hoursText(0.999), '1 h'],
     [hoursText(9.33), '9 h 20 min'],

@@ -298,7 +298,7 @@ const AtWork = ({ planned }: { planned: Planned }) => {
           }}
         >
           <div class="enlarged">
-            <PieceFigure plan={plan} piece={piece} tints={tints} now={seamSet} strong={strong.value} />
+            <PieceFigure plan={plan} piece={piece} tints={tints} now={seamSet} strong={strong.value} large />
           </div>
         </Dialog>
       )}

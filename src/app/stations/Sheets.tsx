@@ -13,6 +13,7 @@ import { Legend } from '../ui/Legend'
 import { lightPiece, pieceAt } from '../ui/lit-page'
 import { ModelView } from '../ui/ModelView'
 import { type Pages, usePageInto, usePages } from '../ui/pages'
+import { usePlansToPrint } from '../ui/plans-to-print'
 import { problemsOn } from '../ui/problems'
 import { pieceByPanel, planItems } from '../ui/scene'
 import { vantage } from '../ui/vantage'
@@ -423,13 +424,9 @@ const Laid = ({ planned }: { planned: Planned }) => {
 }
 
 export const Sheets = () => {
-  const { workshop } = useApp()
-  const ofBench = useSignal(false)
-  const planned = workshop.planned.value
-  const bench = workshop.job.value ? workshop.benchPlan.value : null
-  // A spoiled sheet must be reprinted as it was, whatever the Board says by now.
-  const differ = bench !== null && planned !== null && bench.key !== planned.key
-  const shown = (differ && ofBench.value) || !planned ? bench : planned
+  const { workshop, sheetsOfBench } = useApp()
+  const { planned, bench, shown } = usePlansToPrint()
+  const differ = bench !== null && planned !== null
   return (
     <>
       {differ && (
@@ -440,9 +437,9 @@ export const Sheets = () => {
               <input
                 type="radio"
                 name="which"
-                checked={ofBench.value === each}
+                checked={sheetsOfBench.value === each}
                 onChange={() => {
-                  ofBench.value = each
+                  sheetsOfBench.value = each
                 }}
               />
               {each ? 'the model on the Bench' : 'the latest plan of the Board'}

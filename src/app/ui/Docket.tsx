@@ -1,6 +1,6 @@
 /** The ticket: on the right of every station; on a phone a drawer with one line showing. */
 import { useComputed, useSignal } from '@preact/signals'
-import { useEffect } from 'preact/hooks'
+import { useEffect, useRef } from 'preact/hooks'
 import type { Planned } from '../state/workshop'
 import { docketFacts, type Fact } from '../words/docket'
 import { counted, hoursText } from '../words/figures'
@@ -25,12 +25,15 @@ export const Docket = ({ shown, whose }: { shown: Planned | null; whose: string 
   const marked = useSignal<ReadonlyMap<string, string>>(new Map())
   const isFresh = useComputed(() => workshop.isFresh.value)
 
+  const told = useRef('')
   useEffect(() => {
     const before = workshop.before.peek()
-    if (!shown || !before || shown.key !== workshop.planned.peek()?.key) {
+    // Told once, when the plan has come; not again with every change of station.
+    if (!shown || !before || shown.key !== workshop.planned.peek()?.key || told.current === shown.key) {
       marked.value = new Map()
       return
     }
+    told.current = shown.key
     marked.value = changes(docketFacts(shown.plan, shown.choices), docketFacts(before, shown.choices))
     const timer = setTimeout(() => {
       marked.value = new Map()

@@ -11,6 +11,7 @@ import { useApp } from './context'
 import { Docket } from './Docket'
 import { Help } from './Help'
 import { PlanBar } from './PlanBar'
+import { usePlansToPrint } from './plans-to-print'
 
 const screens: Record<Station, () => preact.JSX.Element> = { shelf: Shelf, board: Board, sheets: Sheets, bench: Bench }
 
@@ -105,8 +106,10 @@ export const Frame = () => {
 
   const Screen = screens[station]
   const onBench = station === 'bench'
-  const shown = onBench ? workshop.benchPlan.value : workshop.planned.value
-  const whose = onBench && workshop.job.value ? 'of the model on the Bench' : (solid.value?.name ?? '')
+  const toPrint = usePlansToPrint()
+  const shown = onBench ? workshop.benchPlan.value : station === 'sheets' ? toPrint.shown : workshop.planned.value
+  const isOfBench = workshop.job.value !== null && shown !== null && shown.key === workshop.benchPlan.value?.key
+  const whose = isOfBench && station !== 'board' ? 'of the model on the Bench' : (solid.value?.name ?? '')
   return (
     <div class="frame">
       <button type="button" class="skip" onClick={() => main.current?.focus()}>

@@ -19,17 +19,19 @@ interface Props {
   readonly now: ReadonlySet<number>
   /** Crease id of the seam pointed at. */
   readonly strong: number | null
+  /** Every label, for a figure that has room for them; else those of the seams to glue now. */
+  readonly large?: boolean
 }
 
-export const PieceFigure = ({ plan, piece, tints, now, strong }: Props) => {
+export const PieceFigure = ({ plan, piece, tints, now, strong, large = false }: Props) => {
   const drawn = useMemo(() => drawPiece(plan, piece), [plan, piece])
   const colours = useMemo(() => new Map(plan.panels.map(({ id, colour }) => [id, colour])), [plan])
   const { box } = drawn
   const size = Math.max(box.width, box.height, 1)
   const pad = size * 0.06
-  // Drawn for a figure about 300 px wide, whatever the size of the piece.
-  const unit = size / 300
-  const text = unit * 11
+  // Lines and letters as for a figure about 300 px wide (700 px if large), whatever the size of the piece.
+  const unit = size / (large ? 700 : 300)
+  const text = unit * (large || now.size <= 16 ? 12 : 9)
   const seams = [...drawn.seams].sort((a, b) => Number(now.has(a.crease)) - Number(now.has(b.crease)))
   return (
     <svg
@@ -70,11 +72,11 @@ export const PieceFigure = ({ plan, piece, tints, now, strong }: Props) => {
             {isNow && (
               <line x1={from[0]} y1={from[1]} x2={to[0]} y2={to[1]} stroke-width={(strong === crease ? 7 : 4) * unit} />
             )}
-            {(isNow || seams.length < 60) && (
+            {(isNow || large) && (
               <text
                 x={at[0]}
                 y={at[1]}
-                font-size={fitted(from, to, isNow ? 1.3 * text : text)}
+                font-size={fitted(from, to, text)}
                 text-anchor="middle"
                 dominant-baseline="central"
               >

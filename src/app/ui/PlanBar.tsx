@@ -48,7 +48,7 @@ export const PlanBar = () => {
       <div class="plan-bar fault" role="alert">
         <div class="grow">
           {kind === 'input' ? (
-            message
+            `${message}${since}`
           ) : (
             <>
               The plan for these choices could not be made: a fault in the program. Undo the last choice, or try another

@@ -25,6 +25,8 @@ export interface AppContext {
   /** What was wrong with something the builder just did; shown until put away. */
   readonly trouble: Signal<string | null>
   readonly pointed: Signal<Pointed>
+  /** Sheets: those of the model on the Bench, where the Board has gone on to another plan. */
+  readonly sheetsOfBench: Signal<boolean>
   readonly spoken: Signal<string>
   /** Read out by screen readers; the last of several quick ones only. */
   announce(text: string): void

@@ -55,23 +55,23 @@ export const docketFacts = (plan: Plan, choices: PlanChoices): Fact[] => {
     },
     {
       id: 'cut',
-      name: 'To cut',
+      name: 'Cutting',
       value: lengthText(docket.cutMm),
       meaning: `${hoursText(hours.cut)} with knife and ruler`,
     },
     {
       id: 'score',
-      name: 'To score',
+      name: 'Scoring',
       value: lengthText(docket.scoreMm),
       meaning: `${hoursText(hours.score)}, and ${hoursText(hours.fold)} to fold`,
     },
     {
       id: 'glue',
-      name: 'To glue',
+      name: 'Gluing',
       value: lengthText(docket.glueMm),
       meaning: `${counted(docket.seams, 'seam')}, ${hoursText(hours.glue)}`,
     },
-    { id: 'hours', name: 'Work', value: hoursText(hours.total), meaning: sayHours(hours.total) },
+    { id: 'hours', name: 'All work', value: hoursText(hours.total), meaning: sayHours(hours.total) },
     {
       id: 'narrowest',
       name: 'Narrowest panel',
@@ -82,7 +82,7 @@ export const docketFacts = (plan: Plan, choices: PlanChoices): Fact[] => {
     },
     {
       id: 'sharpest',
-      name: 'Sharpest angle',
+      name: 'Sharpest inner angle',
       value: degreesText(docket.sharpestInnerAngle),
       meaning: sayAngle(docket.sharpestInnerAngle),
       caution: docket.sharpestInnerAngle < 20,

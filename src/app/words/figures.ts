@@ -13,15 +13,8 @@ export const mmText = (mm: number): string => `${figure(mm, mm < 100 ? 1 : 0)} m
 export const lengthText = (mm: number): string =>
   mm < 1000 ? mmText(mm) : `${figure(mm / 1000, mm < 100_000 ? 1 : 0)} m`
 
-/** `9 h 20 min`, to five minutes from one hour on. */
-export const hoursText = (hours: number): string => {
-  const exact = hours * 60
-  const minutes = exact < 60 ? Math.max(1, Math.round(exact)) : Math.round(exact / 5) * 5
-  const h = Math.floor(minutes / 60)
-  const m = minutes % 60
-  if (h === 0) return `${m} min`
-  return m === 0 ? `${h} h` : `${h} h ${m} min`
-}
+/** `9 h 20 min`, as the printed docket says it. */
+export { duration as hoursText } from '../../drawing'
 
 export const areaText = (mm2: number): string =>
   mm2 < 100_000 ? `${figure(mm2 / 100)} cm²` : `${figure(mm2 / 1e6, 2)} m²`
