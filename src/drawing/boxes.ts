@@ -17,20 +17,13 @@ const capitalHeight = 0.72
 /** Clear space on every side, mm. */
 const air = 0.25
 
+/** The box of one line of text with its middle at `at`, mm and degrees; a little air on every side. */
 export const textBox = (text: string, sizePt: number, at: Vec2, rotation: number): TextBox => ({
   at,
   along: [Math.cos((rotation * Math.PI) / 180), Math.sin((rotation * Math.PI) / 180)],
   halfWidth: textWidthMm(text, sizePt) / 2 + air,
   halfHeight: (capitalHeight * ptToMm(sizePt)) / 2 + air,
 })
-
-export const corners = ({ at, along, halfWidth: w, halfHeight: h }: TextBox): [Vec2, Vec2, Vec2, Vec2] => {
-  const corner = (a: number, b: number): Vec2 => [
-    at[0] + a * along[0] - b * along[1],
-    at[1] + a * along[1] + b * along[0],
-  ]
-  return [corner(-w, -h), corner(w, -h), corner(w, h), corner(-w, h)]
-}
 
 /** Separating axes of two rectangles. */
 export const boxesMeet = (a: TextBox, b: TextBox): boolean => {
@@ -74,6 +67,7 @@ export const segmentMeetsBox = (p: Vec2, q: Vec2, box: TextBox): boolean => {
   return true
 }
 
+/** Is p inside the region (nonzero)? */
 export const pointInside = (rings: readonly Ring2[], p: Vec2): boolean =>
   rings.reduce((w, ring) => w + windingNumber(ring, p), 0) !== 0
 
@@ -85,6 +79,7 @@ export const boxInside = (box: TextBox, rings: readonly Ring2[]): boolean => {
   return true
 }
 
+/** Distance in mm from p to the nearest edge of the rings. */
 export const distanceToEdges = (rings: readonly Ring2[], p: Vec2): number => {
   let least = Number.POSITIVE_INFINITY
   for (const ring of rings)

@@ -58,6 +58,7 @@ const bodyWords = (bodies: number, contacts: number): string =>
     ? 'nothing is held only along a line'
     : `${contacts} ${contacts === 1 ? 'stretch is' : 'stretches are'} held only along a line${bodies > 1 ? ', glue them with care' : ''}`
 
+/** Docket, checks and cautions on one page of the sheets' size. */
 export const drawDocketPage = (plan: Plan, choices: PlanChoices): DrawingPage => {
   const { widthMm, heightMm } = plan.sheets[0] ?? { widthMm: 210, heightMm: 297 }
   const marks: Mark[] = []

@@ -29,11 +29,13 @@ const line = (kind: LineKind, ...points: [number, number][]): LineMark => ({
   closed: false,
 })
 
+/** `, left hand`, or nothing for a solid without hands. */
 export const handWords = (hand: Plan['model']['hand']): string => (hand === 'none' ? '' : `, ${hand} hand`)
 
 /** "this side out": the printed side shows on the finished model; "this side in": it does not. */
 export const sideWords = (side: PlanChoices['side']): string => (side === 'outside' ? 'this side out' : 'this side in')
 
+/** All marks in the margins of one sheet. */
 export const sheetFurniture = (plan: Plan, sheet: PlanSheet, choices: PlanChoices): Mark[] => {
   const { widthMm: w, heightMm: h, marginMm } = sheet
   // Middle of the strip between the printer's reach and the pieces.

@@ -18,4 +18,5 @@ export type PaperId = keyof typeof papers
 /** Thickness in mm of card of a grammage in g/m², at a bulk of 1.27 cm³/g (common practice, 1.2 to 1.35). */
 export const thicknessMm = (grammage: number): number => (grammage * 1.27) / 1000
 
+/** How a card is named on sheets and dockets. */
 export const cardName = (grammage: number): string => `${grammage} g/m²`

@@ -25,6 +25,7 @@ export const placeRings = (rings: readonly Ring2[], placed: Placed): Ring2[] => 
 /** mm²: clipping rounds to 1e-5 mm. */
 const nothing = 1e-3
 
+/** Each item once, inside the margins, the gap kept, groups apart. @param options as they were given to `nest` */
 export const validateSheets = (
   items: readonly NestItem[],
   sheets: readonly NestedSheet[],

@@ -25,6 +25,7 @@ export const covers = (face: FilledFace, p: Vec2): boolean => {
   return face.fill === 'nonzero' ? w !== 0 : (w & 1) !== 0
 }
 
+/** A face ready to be cut. @param plane id of its face plane @param frame of that plane */
 export const fillFace = (solid: Solid, index: number, plane: number, frame: Frame, fill: FillRule): FilledFace => {
   const { cycle: ids, kind } = solid.faces[index]!
   const cycle = ids.map((i) => toPlane(frame, solid.vertices[i]!))

@@ -38,6 +38,7 @@ export interface Sides {
   readonly level: ReadonlyMap<number, Uint8Array>
 }
 
+/** Number of a cell's side; see `Sides.base`. Side 0 faces the plane's normal. */
 export const sideOf = (base: number, cell: number, side: 0 | 1): number => base + 2 * cell + side
 
 /** @throws BrokenPromise when two planes disagree on how an edge is divided, or no ray escapes. */

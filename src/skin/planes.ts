@@ -30,10 +30,12 @@ export interface Frame {
   readonly normal: Vec3
 }
 
+/** Coordinates of p in the frame; what stands off the plane is dropped. */
 export const toPlane = (f: Frame, p: Vec3): Vec2 => {
   const d = sub(p, f.origin)
   return [dot(d, f.u), dot(d, f.v)]
 }
+/** The point of space at (x, y) of the frame. */
 export const toSpace = (f: Frame, x: number, y: number): Vec3 => add(f.origin, add(scale(f.u, x), scale(f.v, y)))
 
 export interface FacePlane {
@@ -186,6 +188,7 @@ export const carriedFaces = (
   }
 }
 
+/** The frame of a plane, its origin the point nearest to the centre. */
 export const frameOf = (plane: { normal: Vec3; offset: number }): Frame => {
   const { u, v } = planeFrame(plane.normal)
   return { origin: scale(plane.normal, plane.offset), u, v, normal: plane.normal }

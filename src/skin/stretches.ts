@@ -35,6 +35,10 @@ export interface Stretches {
 /** Angles this close are one direction: two panels back to back. */
 const sameAngle = 1e-6
 
+/**
+ * @param panels with one ring edge for every edge of the arrangements
+ * @throws BrokenPromise when outside and inside do not take turns round an edge
+ */
 export const findStretches = (panels: readonly RawPanel[], points: readonly Vec3[]): Stretches => {
   const groups = new Map<number, number>()
   const members: { panel: number; ring: number; edge: number; from: number; to: number }[][] = []

@@ -14,4 +14,5 @@ export interface Tolerance {
   readonly on: number
 }
 
+/** For the solids of the catalogue. */
 export const catalogueTolerance: Tolerance = { merge: 1e-8, gap: 1e-5, cell: 2e-3, on: 1e-8 }

@@ -17,6 +17,7 @@ const polygonNames: Readonly<Record<string, string>> = {
   '10/3': 'decagram',
 }
 
+/** English name of {n/d}; d is the polygon's density, under n/2. */
 export const polygonName = (n: number, d: number): string =>
   polygonNames[`${n}/${d}`] ?? (d === 1 ? `${n}-gon` : `${n}/${d}-gram`)
 

@@ -6,6 +6,10 @@ import { schoenflies } from './symmetry'
 import type { Solid, SolidFacts } from './types'
 import { configurationText, dihedral, vertexConfiguration } from './vertex-configuration'
 
+/**
+ * @param index 1 to 75
+ * @param wythoff the symbol it was constructed from
+ */
 export const factsOf = ({ solid, isometries }: Built, index: number, wythoff: string): SolidFacts => {
   const edges = edgesOf(solid)
   const signs = orientFaces(solid, edges)

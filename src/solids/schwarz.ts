@@ -29,6 +29,7 @@ export interface SchwarzTriangle {
 const sideCosine = (opposite: number, a: number, b: number): number =>
   (Math.cos(opposite) + Math.cos(a) * Math.cos(b)) / (Math.sin(a) * Math.sin(b))
 
+/** Corners by the spherical law of cosines, the first at the north pole. */
 export const schwarzTriangle = (numbers: readonly [Rational, Rational, Rational]): SchwarzTriangle => {
   const [a, b, c] = numbers.map((x) => Math.PI / ratio(x)) as [number, number, number]
   const cosPQ = sideCosine(c, a, b)
@@ -48,6 +49,7 @@ export const schwarzTriangle = (numbers: readonly [Rational, Rational, Rational]
   }
 }
 
+/** Mirror image of p in the plane through the centre with this unit normal. */
 export const reflect = (normal: Vec3, p: Vec3): Vec3 => sub(p, scale(normal, 2 * dot(normal, p)))
 
 const near = (a: Mat3, b: Mat3): boolean =>

@@ -47,9 +47,8 @@ export const vertexConfiguration = (solid: Solid, vertex: number): VertexConfigu
   // Faces through the centre are seen edge-on, as half a turn either way: they decide nothing.
   const edgeOn = (angle: number): boolean => Math.abs(Math.abs(angle) - Math.PI) < 1e-6
   const turning = walk.reduce((s, w) => s + (edgeOn(w.angle) ? 0 : w.angle), 0)
-  const total = walk.reduce((s, w) => s + (edgeOn(w.angle) ? 0 : w.angle), 0)
   const sense = turning < -1e-6 ? -1 : 1
-  const windings = Math.max(1, Math.round(Math.abs(total) / (2 * Math.PI)))
+  const windings = Math.max(1, Math.round(Math.abs(turning) / (2 * Math.PI)))
   const steps = walk.map(({ face, angle }): Step => {
     const kind = solid.kinds[solid.faces[face]!.kind]!
     return { n: kind.n, d: kind.d, retrograde: !edgeOn(angle) && angle * sense < 0 }

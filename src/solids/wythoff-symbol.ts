@@ -7,6 +7,7 @@ export interface Rational {
   readonly d: number
 }
 
+/** n/d as a number. */
 export const ratio = ({ n, d }: Rational): number => n / d
 
 export interface WythoffSymbol {

@@ -17,6 +17,10 @@ export interface RawSolid {
 /** A face before it is spread by the group: its corners in space. */
 type Polygon = readonly Vec3[]
 
+/**
+ * Constructs the uniform polyhedron of a Wythoff symbol.
+ * @throws BrokenPromise when the symbol is none that this construction knows
+ */
 export const constructWythoff = (text: string): RawSolid => {
   const symbol = readWythoff(text)
   if (symbol.after.length === 4) return doubleSnub(symbol)
