@@ -3,9 +3,8 @@
  * and the clock are handed in, so that tests run it without a browser.
  */
 import { batch, computed, effect, type ReadonlySignal, type Signal, signal } from '@preact/signals'
-import { Cancelled } from '../../errors'
 import type { Plan, PlanChoices } from '../../plan/types'
-import type { Planner, Refusal } from '../../worker'
+import type { Planner } from '../../worker'
 import type { Opened } from '../storage/file'
 import type { Keeper } from '../storage/keeper'
 import { mergeBuilds } from '../storage/merge'
@@ -14,6 +13,7 @@ import { type Build, choicesOf, choose, type Design, jobOf, newBuild, redesign, 
 import { firstChoices, sameChoices } from './choices'
 import { redo, undo } from './history'
 import { glue, type Job, unglue } from './job'
+import { type Computing, createPlanMaker, type Halted } from './plan-maker'
 
 /** A plan with the choices that it was made from. */
 export interface Planned {
@@ -21,18 +21,6 @@ export interface Planned {
   readonly choices: PlanChoices
   readonly plan: Plan
 }
-export interface Computing {
-  readonly choices: PlanChoices
-  readonly stage: string
-  /** 0..1 of the stage. */
-  readonly fraction: number
-}
-/** Choices for which there is no plan and why; null as reason: the builder stopped it. */
-export interface Halted {
-  readonly choices: PlanChoices
-  readonly refusal: Refusal | null
-}
-
 export interface Workshop {
   readonly keeper: Keeper
   readonly build: Signal<Build>
@@ -106,9 +94,6 @@ export const createWorkshop = async (around: Surroundings): Promise<Workshop> =>
   const tints = computed(() => build.value.history.now.tints)
   const planned = signal<Planned | null>(null)
   const before = signal<Plan | null>(null)
-  const computing = signal<Computing | null>(null)
-  const halted = signal<Halted | null>(null)
-  const wanted = signal(false)
   const job = computed(() => jobOf(build.value))
   const jobPlan = signal<Planned | null>(null)
   const known = signal<ReadonlyMap<string, KnownFacts>>(new Map((await keeper.facts()).map((f) => [f.key, f])))
@@ -171,68 +156,26 @@ export const createWorkshop = async (around: Surroundings): Promise<Workshop> =>
     void keeper.saveFacts(facts)
   }
 
-  const run = async (wish: PlanChoices): Promise<void> => {
-    const owner = build.peek().id
-    batch(() => {
-      halted.value = null
-      computing.value = { choices: wish, stage: '', fraction: 0 }
-    })
-    const isMine = (): boolean => computing.peek()?.choices === wish
-    let refusal: Refusal | null = null
-    let plan: Plan | null = null
-    try {
-      const answer = await planner.compute(wish, (stage, fraction) => {
-        if (isMine()) computing.value = { choices: wish, stage, fraction }
-      })
-      if (answer.ok) plan = answer.value
-      else refusal = answer.refusal
-    } catch (error) {
-      if (error instanceof Cancelled) return
-      const message = error instanceof Error ? error.message : String(error)
-      refusal = { kind: 'defect', message, place: '', details: '' }
-    }
-    if (!isMine()) return
-    batch(() => {
-      computing.value = null
-      if (build.peek().id !== owner) return
-      if (!plan) {
-        halted.value = { choices: wish, refusal }
-        return
-      }
+  const maker = createPlanMaker({
+    planner,
+    choices,
+    isFresh,
+    rest: around.rest,
+    onPlan(plan, wish) {
       const key = newId()
       const last = planned.peek()
       before.value = last?.choices.solid === wish.solid ? last.plan : null
       planned.value = { key, choices: wish, plan }
       set({ ...build.peek(), planned: { choices: wish, planKey: key } }, { key, plan })
       learn(plan, wish)
-    })
-  }
-
-  const stop = (): void => {
-    if (!computing.peek()) return
-    computing.value = null
-    planner.cancel()
-  }
-
-  // Starts, and stops, the computation as the choices go.
-  let timer: ReturnType<typeof setTimeout> | undefined
-  effect(() => {
-    const wish = choices.value
-    clearTimeout(timer)
-    const running = computing.peek()
-    if (running && !sameChoices(running.choices, wish)) stop()
-    else if (running) return
-    if (!wanted.value || isFresh.value) return
-    const stopped = halted.value
-    if (stopped && sameChoices(stopped.choices, wish)) return
-    timer = setTimeout(() => void run(wish), around.rest)
+    },
   })
 
   /** Changes the build on the table. */
   const swap = async (next: Build): Promise<void> => {
-    stop()
+    maker.stop()
     batch(() => {
-      halted.value = null
+      maker.halted.value = null
       planned.value = null
       before.value = null
       jobPlan.value = null
@@ -261,9 +204,9 @@ export const createWorkshop = async (around: Surroundings): Promise<Workshop> =>
     planned,
     before,
     isFresh,
-    computing,
-    halted,
-    wanted,
+    computing: maker.computing,
+    halted: maker.halted,
+    wanted: maker.wanted,
     job,
     benchPlan,
     glued,
@@ -275,16 +218,8 @@ export const createWorkshop = async (around: Surroundings): Promise<Workshop> =>
     },
     undo: () => set({ ...build.peek(), history: undo(build.peek().history) }),
     redo: () => set({ ...build.peek(), history: redo(build.peek().history) }),
-    compute() {
-      if (computing.peek()) return
-      halted.value = null
-      wanted.value = true
-    },
-    cancel() {
-      const running = computing.peek()
-      stop()
-      if (running) halted.value = { choices: running.choices, refusal: null }
-    },
+    compute: maker.compute,
+    cancel: maker.cancel,
     glue(piece) {
       const on = benchPlan.peek()
       if (!on) return
@@ -387,7 +322,7 @@ export const createWorkshop = async (around: Surroundings): Promise<Workshop> =>
       if (id !== build.peek().id) return
       const theirs = (await keeper.builds()).find((entry) => entry.id === id)
       if (!theirs || theirs.revision < revision || theirs.revision <= build.peek().revision) return
-      if (sameChoices(choicesOf(theirs), choices.peek()) === false) stop()
+      if (!sameChoices(choicesOf(theirs), choices.peek())) maker.stop()
       build.value = theirs
       listBuild(theirs)
       if (theirs.planned?.planKey !== planned.peek()?.key) await loadPlans()

@@ -1,84 +1,22 @@
 import { useSignal } from '@preact/signals'
 import { useEffect, useMemo, useRef } from 'preact/hooks'
-import type { Plan, PlanPiece } from '../../plan/types'
 import type { Lit, Preview, SeamLine } from '../../preview'
-import { sayChoices } from '../state/choices'
 import { inOrder, nextPiece, seamsToGlue } from '../state/job'
 import type { Planned } from '../state/workshop'
 import { useApp } from '../ui/context'
 import { Dialog } from '../ui/Dialog'
-import { lightPiece } from '../ui/lit-page'
 import { ModelView } from '../ui/ModelView'
 import { PieceFigure } from '../ui/PieceFigure'
-import { type Pages, usePageInto, usePages } from '../ui/pages'
+import { usePages } from '../ui/pages'
 import { pieceByPanel, planItems } from '../ui/scene'
 import { travel } from '../ui/travel'
 import { vantage } from '../ui/vantage'
 import { sayAcross, sayStep } from '../words/bench'
-import { agoText, counted, hoursText } from '../words/figures'
+import { counted, hoursText } from '../words/figures'
 import { capital } from '../words/solid'
+import { Others } from './BenchOthers'
+import { OnSheet, sheetOf } from './BenchSheet'
 import { GluingLine } from './GluingLine'
-
-const sheetOf = (plan: Plan, piece: number): number =>
-  plan.sheets.findIndex(({ placed }) => placed.some((entry) => entry.piece === piece)) + 1
-
-/** The sheet with the piece lit. */
-const OnSheet = ({ pages, plan, piece }: { pages: Pages; plan: Plan; piece: PlanPiece }) => {
-  const host = useRef<HTMLDivElement>(null)
-  const index = pages.list.value.length > 0 ? pages.pageOf(piece.id) : -1
-  const light = (): void => lightPiece(host.current, piece.id)
-  usePageInto(host, pages, index, light)
-  useEffect(light, [piece.id])
-  const page = pages.list.value[index]
-  return (
-    <figure class="take-sheet">
-      <div
-        class="paper"
-        ref={host}
-        data-testid="take-page"
-        role="img"
-        aria-label={`Sheet ${sheetOf(plan, piece.id)} with piece ${piece.label} lit`}
-        style={{ aspectRatio: page ? `${page.widthMm} / ${page.heightMm}` : '210 / 297' }}
-      />
-      <figcaption class="figures">
-        Sheet {sheetOf(plan, piece.id)} of {plan.sheets.length}
-      </figcaption>
-    </figure>
-  )
-}
-
-const Others = ({ planned }: { planned: Planned }) => {
-  const { workshop, solid } = useApp()
-  const { jobs } = workshop.build.value
-  const job = workshop.job.value
-  const latest = workshop.planned.value
-  const others = jobs.filter(({ id }) => id !== job?.id)
-  const differs = job !== null && latest !== null && latest.key !== job.planKey
-  if (!differs && others.length === 0) return null
-  const isChiral = solid.value?.chiral ?? planned.plan.model.hand !== 'none'
-  return (
-    <div class="others">
-      {differs && (
-        <p>
-          On the Bench: {sayChoices(planned.choices, isChiral)}. The Board has gone on to another plan; this one stays
-          as you print and glue it.{' '}
-          <button type="button" class="link" onClick={() => workshop.startOver()}>
-            Begin a model of the new plan
-          </button>
-        </p>
-      )}
-      {others.map((other) => (
-        <p key={other.id}>
-          Set aside: {other.choices.heightMm} mm, {counted(other.glued.length, 'piece')} glued,{' '}
-          {agoText(other.changed, Date.now())}.{' '}
-          <button type="button" class="link" onClick={() => workshop.resumeJob(other.id)}>
-            Go on with it
-          </button>
-        </p>
-      ))}
-    </div>
-  )
-}
 
 const AtWork = ({ planned }: { planned: Planned }) => {
   const { workshop, router, prefs, announce } = useApp()
