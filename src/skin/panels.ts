@@ -134,7 +134,12 @@ const panelsOfPlane = (
         while (seamless[side][h >> 1]) h = next[h ^ 1]!
       } while (h !== start)
       const m = membersOf(joined.find(2 * cell[start]! + side))
-      for (const loop of simpleLoops(ring)) m.rings.push(side === 0 ? loop : loop.reverse())
+      for (const loop of simpleLoops(ring)) {
+        // A loop there and back is a slit: a body touches the middle of this panel along a line. Closed through the
+        // inside, the panel runs on under it, and there is nothing to fold or glue.
+        if (loop.length < 3) continue
+        m.rings.push(side === 0 ? loop : loop.reverse())
+      }
     }
   }
 
