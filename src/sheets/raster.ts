@@ -51,23 +51,27 @@ export const rasterize = (rings: readonly Ring2[], cellMm: number): Mask => {
         mark(row, Math.min(s, t), Math.max(s, t))
       }
     })
-  // And every cell whose bottom edge is inside.
-  for (let row = 1; row < height; row++) {
-    const crossings: { x: number; turn: number }[] = []
-    const y = row * cellMm
-    for (const ring of rings)
-      ring.forEach((a, i) => {
-        const b = ring[(i + 1) % ring.length]!
-        if (a[1] <= y === b[1] <= y) return
-        crossings.push({ x: at(a, b, y), turn: a[1] <= y ? 1 : -1 })
-      })
-    crossings.sort((p, q) => p.x - q.x)
+  // And every cell whose bottom edge is inside: where each edge crosses the rows' lower borders, then row by row.
+  const crossings: { x: number; turn: number }[][] = Array.from({ length: height }, () => [])
+  for (const ring of rings)
+    ring.forEach((a, i) => {
+      const b = ring[(i + 1) % ring.length]!
+      const turn = a[1] <= b[1] ? 1 : -1
+      const [low, high] = turn > 0 ? [a, b] : [b, a]
+      const last = Math.min(height - 1, Math.ceil(high[1] / cellMm))
+      for (let row = Math.max(1, Math.floor(low[1] / cellMm)); row <= last; row++) {
+        const y = row * cellMm
+        if (low[1] <= y && y < high[1]) crossings[row]!.push({ x: at(low, high, y), turn })
+      }
+    })
+  crossings.forEach((list, row) => {
+    list.sort((p, q) => p.x - q.x)
     let winding = 0
-    for (let i = 0; i + 1 < crossings.length; i++) {
-      winding += crossings[i]!.turn
-      if (winding !== 0) mark(row, crossings[i]!.x, crossings[i + 1]!.x)
+    for (let i = 0; i + 1 < list.length; i++) {
+      winding += list[i]!.turn
+      if (winding !== 0) mark(row, list[i]!.x, list[i + 1]!.x)
     }
-  }
+  })
   const runs: number[] = []
   const starts: number[] = [0]
   const full: number[] = []
