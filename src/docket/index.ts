@@ -1,5 +1,5 @@
 /** Lengths, hours, tight spots and cautions of a plan. */
-export { cautions } from './cautions'
+export { cautions, cautionsEnd } from './cautions'
 export { composeDocket, type PlanWithoutDocket } from './compose'
 export { leastWidth } from './panel-width'
 export { type Rates, toolForWidth, usualRates } from './rates'

@@ -1,3 +1,3 @@
 /** What the docket says in words: no figures are worked out here, so that drawing may lean on it. */
-export { cautions } from './cautions'
+export { cautions, cautionsEnd } from './cautions'
 export { toolForWidth } from './rates'

@@ -1,5 +1,5 @@
 /** The first page: the docket, with what each figure means for the builder, the plan's own checks, and cautions. */
-import { cautions, toolForWidth } from '../docket/words'
+import { cautions, cautionsEnd, toolForWidth } from '../docket/words'
 import type { Plan, PlanChoices } from '../plan/types'
 import { handWords, sideWords } from './furniture'
 import { textWidthMm, wrapText } from './text-width'
@@ -121,7 +121,7 @@ export const drawDocketPage = (plan: Plan, choices: PlanChoices): DrawingPage =>
   y -= 7
   write('Before you start', left, y, 10, { role: 'heading', bold: true })
   y -= 5.5
-  for (const caution of cautions) {
+  for (const caution of [...cautions.map(({ title, text }) => `${title}: ${text}`), cautionsEnd]) {
     for (const row of wrapText(caution, 8.5, widthMm - 2 * left)) {
       write(row, left, y, 8.5)
       y -= 4.4

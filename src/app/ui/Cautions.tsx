@@ -1,4 +1,4 @@
-import { cautions, cautionsEnd } from '../words/craft'
+import { cautions, cautionsEnd } from '../../drawing'
 
 export const Cautions = () => (
   <div class="cautions">
