@@ -32,7 +32,7 @@ export const docketRows = (plan: Plan, choices: PlanChoices): [string, string, s
       `${(d.cardAreaMm2 / 1e6).toFixed(2)} m² of card, ${(100 * d.utilisation).toFixed(0)} % used`,
     ],
     ['Pieces', `${d.pieces}`, `${d.templates} templates, ${d.panels} panels`],
-    ['Seams', `${d.seams}`, `${d.buttSeams.length} without a tab: glue bare edges or use a strip`],
+    ['Seams', `${d.seams}`, seamWords(d.buttSeams.length)],
     ['Cutting', metres(d.cutMm), duration(d.hours.cut)],
     ['Scoring', metres(d.scoreMm), duration(d.hours.score)],
     ['Folding', '', duration(d.hours.fold)],
@@ -44,6 +44,9 @@ export const docketRows = (plan: Plan, choices: PlanChoices): [string, string, s
     ['Bodies', `${d.bodies}`, bodyWords(d.bodies, d.lineContacts)],
   ]
 }
+
+const seamWords = (bare: number): string =>
+  bare === 0 ? 'all with a tab' : `${bare} without a tab: glue bare edges or use a strip`
 
 /** Limits for fingers and knife: warn under 20 degrees, refuse under 10 (common practice, no source). */
 const angleWords = (degrees: number): string =>
@@ -86,6 +89,8 @@ export const drawDocketPage = (plan: Plan, choices: PlanChoices): DrawingPage =>
       closed: false,
     })
   }
+  // The page is full on A4; shorter paper gets closer rows.
+  const rowMm = heightMm < 290 ? 5 : 6.2
   let y = heightMm - 24
   const title = plan.model.name.charAt(0).toUpperCase() + plan.model.name.slice(1)
   const titleSize = Math.min(20, (20 * (widthMm - 2 * left)) / textWidthMm(title, 21))
@@ -100,7 +105,7 @@ export const drawDocketPage = (plan: Plan, choices: PlanChoices): DrawingPage =>
     write(name, left, y, 9.5)
     write(value, valueColumn, y, 9.5, { bold: true })
     write(meaning, meaningColumn, y, 8.5)
-    y -= 6.2
+    y -= rowMm
   }
   y -= 1
   rule(y)

@@ -60,6 +60,19 @@ describe('folds', () => {
   })
 })
 
+describe('the docket page', () => {
+  for (const paper of ['a4', 'letter'] as const)
+    test(`keeps inside the margins on ${paper}`, () => {
+      const some: PlanChoices = { ...choices, solid: 'tetrahemihexahedron', paper }
+      const page = drawPlan(makePlan(some), some)[0] as DrawingPage
+      for (const m of page.marks) {
+        if (m.type !== 'text') continue
+        expect(m.at[1]).toBeGreaterThan(10)
+        expect(m.at[0] + textWidthMm(m.text, m.sizePt)).toBeLessThan(page.widthMm - 10)
+      }
+    })
+})
+
 describe('text', () => {
   test('widths agree with the font of the PDF library', async () => {
     const doc = await PDFDocument.create()
