@@ -105,54 +105,51 @@ const at = (a: Vec2, b: Vec2, y: number): number => {
   return a[0] + t * (b[0] - a[0])
 }
 
-/** The cells of one sheet that are taken, as running counts along each row, so that a run is tested by two look-ups. */
+/** The cells of one sheet that are taken, row by row, kept so that a clash says at once how far to move on. */
 export class Board {
-  /** before[row · (width + 1) + x]: taken cells of the row left of x. */
-  private readonly before: Uint16Array
-  private readonly open: Uint16Array
+  /** nearest[row · (width + 1) + x]: the last taken cell of the row left of x; −1 if there is none. */
+  private readonly nearest: Int16Array
   free: number
 
   constructor(
     readonly width: number,
     readonly height: number,
   ) {
-    this.before = new Uint16Array((width + 1) * height)
-    this.open = new Uint16Array(width)
+    this.nearest = new Int16Array((width + 1) * height).fill(-1)
     this.free = width * height
   }
 
   /** The least x ≤ lastX at which the mask, its lowest row at y, meets no taken cell; −1 if there is none. */
   firstFree(mask: Mask, y: number, lastX: number): number {
-    const { before, open } = this
-    const { runs, starts } = mask
-    let left = lastX + 1
-    for (let x = 0; x < left; x++) open[x] = x
-    for (let k = 0; k < mask.height && left > 0; k++) {
-      const row = mask.rows[k]!
-      const base = (y + row) * (this.width + 1)
+    const { nearest } = this
+    const { runs, starts, rows, height } = mask
+    const stride = this.width + 1
+    let x = 0
+    // Every clash moves the mask on until its run clears the taken cell; it fits when all rows in turn had no clash.
+    for (let k = 0, quiet = 0; quiet < height; k = k + 1 === height ? 0 : k + 1, quiet++) {
+      const row = rows[k]!
+      const base = (y + row) * stride
       for (let r = starts[row]!; r < starts[row + 1]!; r++) {
-        const from = base + runs[2 * r]!
-        const to = base + runs[2 * r + 1]!
-        let kept = 0
-        for (let i = 0; i < left; i++) {
-          const x = open[i]!
-          if (before[from + x] === before[to + x]) open[kept++] = x
-        }
-        left = kept
+        const taken = nearest[base + x + runs[2 * r + 1]!]!
+        if (taken < x + runs[2 * r]!) continue
+        x = taken + 1 - runs[2 * r]!
+        if (x > lastX) return -1
+        quiet = -1
+        r = starts[row]! - 1
       }
     }
-    return left > 0 ? open[0]! : -1
+    return x
   }
 
   put(mask: Mask, x: number, y: number): void {
-    const { before, width } = this
+    const { nearest, width } = this
     for (let row = 0; row < mask.height; row++) {
       const base = (y + row) * (width + 1)
       for (let r = mask.starts[row]!; r < mask.starts[row + 1]!; r++) {
         const from = x + mask.runs[2 * r]!
         const to = x + mask.runs[2 * r + 1]!
-        // The cells are free, so the counts to the right all grow by the same.
-        for (let i = from + 1; i <= width; i++) before[base + i]! += Math.min(i, to) - from
+        for (let i = from + 1; i <= to; i++) nearest[base + i] = i - 1
+        for (let i = to + 1; i <= width && nearest[base + i]! < to - 1; i++) nearest[base + i] = to - 1
       }
     }
     this.free -= mask.cells
