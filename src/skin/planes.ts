@@ -8,7 +8,6 @@ import type { Vec2 } from '../geometry/vec2'
 import {
   add,
   apply,
-  cross,
   distance,
   dot,
   identity3,
@@ -20,6 +19,8 @@ import {
   type Vec3,
 } from '../geometry/vec3'
 import type { Solid } from '../solids/types'
+import { acrossFace } from './area'
+import { groupByPlane } from './plane-groups'
 import type { Tolerance } from './tolerance'
 
 /** A frame of a plane: point = origin + x·u + y·v, with u × v = normal. */
@@ -67,52 +68,13 @@ export interface PlaneSet {
   readonly planeOfFace: readonly number[]
 }
 
-/** Area vector of a closed polygon in space (half the sum of cross products), star polygons counted by winding. */
-export const areaVector = (points: readonly Vec3[]): Vec3 => {
-  let sum: Vec3 = [0, 0, 0]
-  const o = points[0]!
-  for (let i = 1; i + 1 < points.length; i++) sum = add(sum, cross(sub(points[i]!, o), sub(points[i + 1]!, o)))
-  return scale(sum, 0.5)
-}
-
 /**
  * Sorts the faces of a solid into planes and the planes into orbits under `solid.rotations`.
  * @throws BrokenPromise when a face is not flat within `tolerance.on`, or a rotation does not map planes to planes.
  */
 export const findPlanes = (solid: Solid, tolerance: Tolerance): PlaneSet => {
-  // Normals are compared on the unit sphere, where a looser bound than for points is safe: planes that differ by less
-  // than 1e-7 in direction would have vertices inside the tolerance gap.
-  const normals = new SnapGrid(1e-7, 1e-7, 1e-2)
-  const byNormal = new Map<number, number[]>()
-  const found: { normal: Vec3; offset: number; faces: number[] }[] = []
-  const lookUp = (normal: Vec3, offset: number): number => {
-    const k = normals.find(normal[0], normal[1], normal[2])
-    if (k < 0) return -1
-    for (const p of byNormal.get(k) ?? []) if (Math.abs(found[p]!.offset - offset) <= tolerance.on) return p
-    return -1
-  }
-  const planeOfFace = solid.faces.map((face, index) => {
-    const points = face.cycle.map((i) => solid.vertices[i]!)
-    const area = areaVector(points)
-    const normal = scale(area, 1 / norm(area))
-    const offset = points.reduce((s, p) => s + dot(normal, p), 0) / points.length
-    for (const p of points)
-      if (Math.abs(dot(normal, p) - offset) > tolerance.on)
-        throw new BrokenPromise('A face is not flat.', { face: index, by: dot(normal, p) - offset })
-    let id = lookUp(normal, offset)
-    if (id < 0) id = lookUp(scale(normal, -1), -offset)
-    if (id < 0) {
-      id = found.length
-      found.push({ normal, offset, faces: [] })
-      const k = normals.add(normal[0], normal[1], normal[2])
-      const list = byNormal.get(k)
-      if (list) list.push(id)
-      else byNormal.set(k, [id])
-    }
-    found[id]!.faces.push(index)
-    return id
-  })
-
+  if (solid.precision !== undefined) return roughPlanes(solid, tolerance)
+  const { found, planeOfFace, lookUp } = exactPlanes(solid, tolerance)
   const planes: (FacePlane | undefined)[] = found.map(() => undefined)
   const representatives: number[] = []
   const stabilizers = new Map<number, Stabilizer[]>()
@@ -148,6 +110,71 @@ export const findPlanes = (solid: Solid, tolerance: Tolerance): PlaneSet => {
     }
   }
   return { planes: planes as FacePlane[], representatives, stabilizers, planeOfFace }
+}
+
+/** Faces sorted into planes where equal planes agree to rounding. `lookUp`: id of the plane with this normal, or -1. */
+const exactPlanes = (
+  solid: Solid,
+  tolerance: Tolerance,
+): {
+  found: { normal: Vec3; offset: number; faces: number[] }[]
+  planeOfFace: number[]
+  lookUp: (normal: Vec3, offset: number) => number
+} => {
+  // Normals are compared on the unit sphere, where a looser bound than for points is safe: planes that differ by less
+  // than 1e-7 in direction would have vertices inside the tolerance gap.
+  const normals = new SnapGrid(1e-7, 1e-7, 1e-2)
+  const byNormal = new Map<number, number[]>()
+  const found: { normal: Vec3; offset: number; faces: number[] }[] = []
+  const lookUp = (normal: Vec3, offset: number): number => {
+    const k = normals.find(normal[0], normal[1], normal[2])
+    if (k < 0) return -1
+    for (const p of byNormal.get(k) ?? []) if (Math.abs(found[p]!.offset - offset) <= tolerance.on) return p
+    return -1
+  }
+  const planeOfFace = solid.faces.map((face, index) => {
+    const points = face.cycle.map((i) => solid.vertices[i]!)
+    const area = acrossFace(points)
+    const normal = scale(area, 1 / norm(area))
+    const offset = points.reduce((s, p) => s + dot(normal, p), 0) / points.length
+    for (const p of points)
+      if (Math.abs(dot(normal, p) - offset) > tolerance.on)
+        throw new BrokenPromise('A face is not flat.', { face: index, by: dot(normal, p) - offset })
+    let id = lookUp(normal, offset)
+    if (id < 0) id = lookUp(scale(normal, -1), -offset)
+    if (id < 0) {
+      id = found.length
+      found.push({ normal, offset, faces: [] })
+      const k = normals.add(normal[0], normal[1], normal[2])
+      const list = byNormal.get(k)
+      if (list) list.push(id)
+      else byNormal.set(k, [id])
+    }
+    found[id]!.faces.push(index)
+    return id
+  })
+  return { found, planeOfFace, lookUp }
+}
+
+/** Every plane its own representative: motions found in rough coordinates are rough themselves. */
+const roughPlanes = (solid: Solid, tolerance: Tolerance): PlaneSet => {
+  const { groups, groupOfFace } = groupByPlane(solid, tolerance.on)
+  const planes = groups.map(
+    ({ normal, offset, faces }, id): FacePlane => ({
+      id,
+      normal,
+      offset,
+      faces,
+      representative: id,
+      motion: identity3,
+    }),
+  )
+  return {
+    planes,
+    representatives: planes.map((p) => p.id),
+    stabilizers: new Map(planes.map((p) => [p.id, []])),
+    planeOfFace: groupOfFace,
+  }
 }
 
 /**

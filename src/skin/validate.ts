@@ -1,7 +1,7 @@
 /** What a skin promises, checked on the skin alone. */
 import { UnionFind } from '../geometry/union-find'
 import { add, cross, distance, dot, norm, normalize, scale, sub, type Vec3 } from '../geometry/vec3'
-import { areaVector } from './planes'
+import { areaVector } from './area'
 import type { Skin, SkinPanel } from './types'
 
 export interface Check {

@@ -36,7 +36,15 @@ export interface Solid {
   readonly faces: readonly SolidFace[]
   readonly kinds: readonly FaceKind[]
   readonly rotations: readonly Mat3[]
+  /** Missing: uniform. */
+  readonly family?: Family
+  /** Face → component, for compounds and models of several components; missing: one component. */
+  readonly components?: readonly number[]
+  /** How far coordinates may be off, in the solid's own unit, for models read from files; missing: constructed to 1e-12. */
+  readonly precision?: number
 }
+
+export type Family = 'uniform' | 'prism' | 'antiprism' | 'dual' | 'compound' | 'own'
 
 export type FillRule = 'nonzero' | 'evenodd'
 
