@@ -1,6 +1,6 @@
 /** The command `skin`: what can be touched from outside, for one solid or for all. */
 import { computeSkin } from '../skin'
-import { buildSolid, listSolids } from '../solids'
+import { buildSolid, listFamily } from '../solids'
 import type { FillRule } from '../solids/types'
 import { knownSolid } from './known-solid'
 import { textTable } from './text-table'
@@ -33,7 +33,7 @@ const report = (id: string, fill: FillRule): SkinReport => {
 }
 
 export const skin = (id: string | 'all', fill: FillRule, json: boolean): string => {
-  const ids = id === 'all' ? listSolids().map((facts) => facts.id) : [knownSolid(id).id]
+  const ids = id === 'all' ? listFamily('uniform').map((facts) => facts.id) : [knownSolid(id).id]
   const reports = ids.map((one) => report(one, fill))
   if (json) return JSON.stringify(reports, undefined, 1)
   const head = ['id', 'fill', 'panels', 'area edge²', 'volume edge³', 'bodies', 'line contact', 'ms']

@@ -16,6 +16,7 @@ export const factsOf = ({ solid, isometries }: Built, index: number, wythoff: st
   return {
     id: solid.id,
     index,
+    family: solid.family ?? 'uniform',
     name: solid.name,
     wythoff,
     vertexConfiguration: configurationText(vertexConfiguration(solid, 0)),
@@ -29,6 +30,9 @@ export const factsOf = ({ solid, isometries }: Built, index: number, wythoff: st
     orientable: signs !== null,
     symmetry: schoenflies(isometries),
     circumradius: Math.max(...solid.vertices.map(norm)),
+    dual: null,
+    components: 1,
+    notes: [],
     dihedralAngles: dihedralAngles(solid, edges),
   }
 }

@@ -7,11 +7,11 @@ import { factsOf } from './facts'
 import { uniformNames } from './names'
 import { nearest, search } from './search'
 import { mirrorSolid } from './transform'
-import type { Solid, SolidFacts } from './types'
+import type { Solid, SolidFacts, SolidFamily } from './types'
 import { constructWythoff } from './wythoff'
 
 export { mirrorSolid, transformSolid } from './transform'
-export type { FaceKind, FillRule, Solid, SolidFace, SolidFacts, SolidHand } from './types'
+export type { FaceKind, FillRule, Solid, SolidFace, SolidFacts, SolidFamily, SolidHand } from './types'
 export { validateSolid } from './validate'
 
 /** One solid of the catalogue. */
@@ -40,6 +40,9 @@ const byId = new Map(catalogue.map((e) => [e.id, e]))
 
 /** All solids, in index order. */
 export const listSolids = (): readonly SolidFacts[] => catalogue.map((e) => e.facts())
+
+/** The solids of one family, in the order of `listSolids`; the 75 are `uniform`. Constructs no other family. */
+export const listFamily = (family: SolidFamily): readonly SolidFacts[] => (family === 'uniform' ? listSolids() : [])
 
 /** Facts of one solid, or undefined. */
 export const solidFacts = (id: string): SolidFacts | undefined => byId.get(id)?.facts()

@@ -9,7 +9,7 @@ const plain = (text: string): string =>
     .replace(/[^a-z0-9]+/g, ' ')
     .trim()
 
-/** Solids that match the query; best matches (whole name, whole word) first, then in index order. */
+/** Solids that match the query; best matches (whole name, whole word) first, then in the order of the list. */
 export const search = (all: readonly SolidFacts[], query: string): SolidFacts[] => {
   const text = query.trim()
   if (text === '') return [...all]
@@ -30,9 +30,9 @@ export const search = (all: readonly SolidFacts[], query: string): SolidFacts[] 
     return words.every((w) => name.includes(w)) ? 3 : 4
   }
   return all
-    .map((f) => ({ f, score: score(f) }))
+    .map((f, place) => ({ f, place, score: score(f) }))
     .filter((x) => x.score < 4)
-    .sort((a, b) => a.score - b.score || a.f.index - b.f.index)
+    .sort((a, b) => a.score - b.score || a.place - b.place)
     .map((x) => x.f)
 }
 

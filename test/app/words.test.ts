@@ -8,7 +8,7 @@ import { heightForWidth, narrowest, sayNarrowest } from '../../src/app/words/cra
 import { docketFacts } from '../../src/app/words/docket'
 import { areaText, figure, hoursText, lengthText, mmText } from '../../src/app/words/figures'
 import { toolForWidth } from '../../src/docket'
-import { findSolids, listSolids } from '../../src/solids'
+import { findSolids, listFamily } from '../../src/solids'
 import { cubePlan } from '../plan/by-hand'
 
 describe('figures', () => {
@@ -81,7 +81,7 @@ describe('craft', () => {
 })
 
 describe('consequences', () => {
-  const cube = listSolids().find(({ id }) => id === 'cube')!
+  const cube = listFamily('uniform').find(({ id }) => id === 'cube')!
   test('of a height: the edge of a cube is its height over the root of three', () => {
     expect(sayHeight(cube, firstChoices('cube'), undefined)).toBe(`Edge ${mmText(250 / Math.sqrt(3))}.`)
     const known = { key: '', panels: 6, narrowest: 0.004, hours: 1, heightMm: 250 }
@@ -115,7 +115,7 @@ describe('the sentence of the Bench', () => {
 })
 
 describe('the Shelf', () => {
-  const all = listSolids()
+  const all = listFamily('uniform')
   test('five regular and thirteen semiregular solids are convex (Coxeter, Longuet-Higgins, Miller: Uniform polyhedra, Philosophical Transactions of the Royal Society A, 1954)', () => {
     expect(all.filter(isConvex)).toHaveLength(18)
     expect(all.filter((solid) => passes(solid, new Set(['nonconvex'])))).toHaveLength(57)

@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest'
 import { add, cross, dot, norm, sub, type Vec3 } from '../../src/geometry/vec3'
 import { cutIntoPieces, type Piece, piecesOf, validatePieces } from '../../src/pieces'
 import { computeSkin, type Skin } from '../../src/skin'
-import { buildSolid, listSolids, type Solid } from '../../src/solids'
+import { buildSolid, listFamily, type Solid } from '../../src/solids'
 import { tabFaults, worstOverlap } from './by-clipping'
 import { a4, planOf } from './plans'
 
@@ -64,7 +64,7 @@ describe('pieces at 250 mm on A4, printable 190 × 277 mm', () => {
 
 describe('convex uniform solids', () => {
   // Density 1 holds one that is not convex as well.
-  const convex = listSolids().filter((s) => s.density === 1 && isConvex(buildSolid(s.id)))
+  const convex = listFamily('uniform').filter((s) => s.density === 1 && isConvex(buildSolid(s.id)))
   it('are eighteen', () => {
     expect(convex).toHaveLength(18)
   })

@@ -4,7 +4,7 @@ import { apply, determinant, distance, type Mat3 } from '../../src/geometry/vec3
 import {
   buildSolid,
   findSolids,
-  listSolids,
+  listFamily,
   mirrorSolid,
   nearestIds,
   transformSolid,
@@ -46,7 +46,7 @@ describe('finding', () => {
     expect(names('2 3 | 4')).toEqual(['truncated cube'])
   })
   test('every solid is found by each of its four names', () => {
-    for (const f of listSolids())
+    for (const f of listFamily('uniform'))
       for (const query of [f.name, String(f.index), f.vertexConfiguration, f.wythoff])
         expect([
           query,
@@ -81,7 +81,7 @@ const congruent = (a: Solid, b: Solid): boolean => {
 }
 
 describe('hands', () => {
-  const chiral = listSolids().filter((f) => f.chiral)
+  const chiral = listFamily('uniform').filter((f) => f.chiral)
   for (const f of chiral)
     test(`${f.name}: left is the mirror image of right, and not right itself turned`, () => {
       const right = buildSolid(f.id, 'right')

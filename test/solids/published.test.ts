@@ -6,10 +6,10 @@
  */
 import { describe, expect, test } from 'vitest'
 import { cross, dot, sub, type Vec3 } from '../../src/geometry/vec3'
-import { buildSolid, listSolids } from '../../src/solids'
+import { buildSolid, listFamily } from '../../src/solids'
 import type { Solid, SolidFacts } from '../../src/solids/types'
 
-const u = (index: number): SolidFacts => listSolids()[index - 1] as SolidFacts
+const u = (index: number): SolidFacts => listFamily('uniform')[index - 1] as SolidFacts
 const s5 = Math.sqrt(5)
 const s2 = Math.SQRT2
 
@@ -198,7 +198,7 @@ describe('facts of the trade (common practice, no source)', () => {
     expect(central).toBe(60)
   })
   test('counts over the set: 5 + 13 convex, 9 chiral, 15 not orientable, only {5/2}, {8/3}, {10/3} as stars', () => {
-    const all = listSolids()
+    const all = listFamily('uniform')
     expect(all.length).toBe(75)
     expect(all.filter((f) => f.chiral).map((f) => f.index)).toEqual([12, 29, 40, 46, 57, 60, 64, 69, 74])
     expect(all.filter((f) => !f.orientable).map((f) => f.index)).toEqual([
