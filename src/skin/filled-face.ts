@@ -31,6 +31,9 @@ export const fillFace = (solid: Solid, index: number, plane: number, frame: Fram
   const cycle = ids.map((i) => toPlane(frame, solid.vertices[i]!))
   const bare: FilledFace = { index, kind, plane, frame, cycle, boundary: [], fill }
   const boundary: [Vec3, Vec3][] = []
+  // A rough vertex is taken where it meets the plane, so that what is computed from this face lies in the plane exactly.
+  const corner = (i: number): Vec3 =>
+    solid.precision === undefined ? solid.vertices[ids[i]!]! : toSpace(frame, cycle[i]![0], cycle[i]![1])
   const n = cycle.length
   for (let i = 0; i < n; i++) {
     const a = cycle[i]!
@@ -52,8 +55,8 @@ export const fillFace = (solid: Solid, index: number, plane: number, frame: Fram
       const mx = a[0] + m * dx
       const my = a[1] + m * dy
       if (covers(bare, [mx - step * dy, my + step * dx]) !== covers(bare, [mx + step * dy, my - step * dx])) {
-        const from = s === 0 ? solid.vertices[ids[i]!]! : toSpace(frame, a[0] + s * dx, a[1] + s * dy)
-        const to = t === 1 ? solid.vertices[ids[(i + 1) % n]!]! : toSpace(frame, a[0] + t * dx, a[1] + t * dy)
+        const from = s === 0 ? corner(i) : toSpace(frame, a[0] + s * dx, a[1] + s * dy)
+        const to = t === 1 ? corner((i + 1) % n) : toSpace(frame, a[0] + t * dx, a[1] + t * dy)
         boundary.push([from, to])
       }
     }

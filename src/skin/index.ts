@@ -1,7 +1,7 @@
 /**
  * The skin of a solid: what can be touched from outside, as panels and creases.
  */
-import { noProgress, type Progress } from '../errors'
+import { BrokenPromise, InputError, noProgress, type Progress } from '../errors'
 import { distance, dot, norm, type Vec3 } from '../geometry/vec3'
 import type { FillRule, Solid } from '../solids/types'
 import { areaVector } from './area'
@@ -13,29 +13,57 @@ import { findOutside } from './outside'
 import { collectPanels, type RawPanel } from './panels'
 import { carriedFaces, findPlanes, frameOf } from './planes'
 import { findStretches } from './stretches'
-import { catalogueTolerance, type Tolerance } from './tolerance'
+import { catalogueTolerance, roughTolerances, type Tolerance } from './tolerance'
 import type { LineContact, Skin, SkinCrease, SkinPanel } from './types'
+import { validateSkin } from './validate'
 
 export type { LineContact, Skin, SkinCrease, SkinPanel } from './types'
 export { validateSkin } from './validate'
 
 /**
  * Computes the skin: the boundary of the unbounded component of space minus the union of all filled faces.
- * Lengths in unit edges. Deterministic; cost is governed by the face planes that differ under `solid.rotations`.
+ * Lengths in unit edges (for models of a builder: in the solid's own unit). Deterministic; cost is governed by the face
+ * planes that differ under `solid.rotations`.
  *
  * @param fill `nonzero`: star polygons are filled stars; `evenodd`: star centres are open
  * @throws BrokenPromise when the tolerance gap is not kept, or the surface does not close
+ * @throws InputError for a builder's model that no tolerance resolves
  * @throws Cancelled out of `progress`
  */
-export const computeSkin = (
-  solid: Solid,
-  fill: FillRule = 'nonzero',
-  progress: Progress = noProgress,
-  tolerance: Tolerance = catalogueTolerance,
-): Skin => {
+export const computeSkin = (solid: Solid, fill: FillRule = 'nonzero', progress: Progress = noProgress): Skin => {
+  if (solid.precision === undefined) return skinWithin(solid, fill, catalogueTolerance, progress)
+  let fault: BrokenPromise | null = null
+  for (const tolerance of roughTolerances(solid.precision)) {
+    try {
+      const skin = skinWithin(solid, fill, tolerance, progress)
+      const failed = validateSkin(skin).filter((c) => !c.ok)
+      if (failed.length === 0) return skin
+      fault = new BrokenPromise('The skin does not keep its promises.', { failed })
+    } catch (error) {
+      if (!(error instanceof BrokenPromise)) throw error
+      fault = error
+    }
+  }
+  throw new InputError(
+    `Some faces of ${solid.name} come closer to each other than its coordinates can tell apart${placeOf(fault)}. ` +
+      'Save the model with more digits, or mend that place.',
+    'model',
+  )
+}
+
+/** Where a fault happened, if it says. */
+const placeOf = (fault: BrokenPromise | null): string => {
+  const at = fault?.details.at ?? fault?.details.a
+  if (!Array.isArray(at) || at.length !== 3) return ''
+  return ` (near ${at.map((x: number) => x.toFixed(4)).join(', ')}; the model's reach is 1)`
+}
+
+/** The skin with one tolerance, unchecked. */
+export const skinWithin = (solid: Solid, fill: FillRule, tolerance: Tolerance, progress: Progress): Skin => {
   const set = findPlanes(solid, tolerance)
   const frames = set.planes.map(frameOf)
   const faces: FilledFace[] = solid.faces.map((_, i) => {
+    if (i % 256 === 0) progress('skin', (0.1 * i) / solid.faces.length)
     const plane = set.planeOfFace[i]!
     return fillFace(solid, i, plane, frames[plane]!, fill)
   })
@@ -43,13 +71,11 @@ export const computeSkin = (
   const ownFaces = set.planes.map((plane) => plane.faces.map((f) => faces[f]!))
   const arrangements = new Map<number, Arrangement>()
   set.representatives.forEach((r, i) => {
-    progress('skin', (0.6 * i) / set.representatives.length)
+    progress('skin', 0.1 + (0.4 * i) / set.representatives.length)
     const own = ownFaces[r]!
     arrangements.set(r, arrange(set.planes[r]!, frames[r]!, own, neighbours(own), tolerance))
   })
-  progress('skin', 0.6)
-  const sides = findOutside(set, arrangements, faces)
-  progress('skin', 0.8)
+  const sides = findOutside(set, arrangements, faces, (done) => progress('skin', 0.5 + 0.3 * done))
   const kinds = solid.faces.map((f) => f.kind)
   const { panels: raw, points } = collectPanels(
     set,
@@ -58,13 +84,21 @@ export const computeSkin = (
     kinds,
     carriedFaces(solid, set, tolerance),
     tolerance,
+    (done) => progress('skin', 0.8 + 0.1 * done),
   )
   progress('skin', 0.9)
-  return assemble(solid, fill, raw, points)
+  const slack = solid.precision === undefined ? 0 : tolerance.merge
+  return assemble(solid, fill, raw, points, slack)
 }
 
-const assemble = (solid: Solid, fill: FillRule, raw: readonly RawPanel[], points: readonly Vec3[]): Skin => {
-  const { stretches, stretchOf } = findStretches(raw, points)
+const assemble = (
+  solid: Solid,
+  fill: FillRule,
+  raw: readonly RawPanel[],
+  points: readonly Vec3[],
+  slack: number,
+): Skin => {
+  const { stretches, stretchOf } = findStretches(raw, points, slack)
   const lengths = stretches.map((s) => distance(points[s.from]!, points[s.to]!))
   const pairing = pairContacts(stretches, raw.length, lengths)
 
@@ -145,6 +179,7 @@ const assemble = (solid: Solid, fill: FillRule, raw: readonly RawPanel[], points
     solid: solid.id,
     hand: solid.hand,
     fill,
+    slack,
     points: kept,
     panels,
     creases: creases.map((c) => ({ ...c, ends: endsOf(c.ends) })),

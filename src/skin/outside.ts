@@ -46,6 +46,7 @@ export const findOutside = (
   set: PlaneSet,
   arrangements: ReadonlyMap<number, Arrangement>,
   faces: readonly FilledFace[],
+  report: (done: number) => void = () => {},
 ): Sides => {
   const base = new Map<number, number>()
   let count = 0
@@ -57,7 +58,8 @@ export const findOutside = (
   const infinity = count
 
   const level = new Map<number, Uint8Array>()
-  for (const r of set.representatives) {
+  for (const [i, r] of set.representatives.entries()) {
+    report((0.7 * i) / set.representatives.length)
     const arrangement = arrangements.get(r)!
     const bits = new Uint8Array(arrangement.origin.length / 2)
     for (let e = 0; e < bits.length; e++) {
@@ -80,7 +82,7 @@ export const findOutside = (
       }
     }
   }
-  castRays(set, arrangements, faces, base, regions, infinity)
+  castRays(set, arrangements, faces, base, regions, infinity, (done) => report(0.7 + 0.3 * done))
 
   const home = regions.find(infinity)
   const outside = Array.from({ length: count }, (_, s) => regions.find(s) === home)
@@ -226,6 +228,7 @@ const castRays = (
   base: ReadonlyMap<number, number>,
   regions: UnionFind,
   infinity: number,
+  report: (done: number) => void,
 ): void => {
   const images = new Map<number, number>()
   for (const p of set.planes) images.set(p.representative, (images.get(p.representative) ?? 0) + 1)
@@ -248,7 +251,8 @@ const castRays = (
     })
   }
   const open = [...pieces.values()].filter((p) => p.volume > -1e-12).sort((a, b) => b.volume - a.volume)
-  for (const piece of open) {
+  for (const [i, piece] of open.entries()) {
+    report(i / open.length)
     piece.sides.sort((a, b) => b.area - a.area)
     const rays = Math.max(48, Math.min(400, 2 * piece.sides.length))
     for (let k = 0; k < rays; k++) {

@@ -41,10 +41,12 @@ export const collectPanels = (
   kindOfFace: readonly number[],
   carried: (plane: FacePlane, face: number) => number,
   tolerance: Tolerance,
+  report: (done: number) => void = () => {},
 ): { panels: RawPanel[]; points: Vec3[] } => {
   const templates = new Map<number, Template[]>()
   let orbits = 0
-  for (const r of set.representatives) {
+  for (const [i, r] of set.representatives.entries()) {
+    report(i / set.representatives.length)
     const list = panelsOfPlane(set, arrangements.get(r)!, sides, kindOfFace, orbits)
     orbits = list.reduce((m, t) => Math.max(m, t.orbit + 1), orbits)
     templates.set(r, list)

@@ -4,7 +4,7 @@
  */
 import { BrokenPromise } from '../errors'
 import { UnionFind } from '../geometry/union-find'
-import { cross, dot, normalize, planeFrame, sub, type Vec3 } from '../geometry/vec3'
+import { cross, distance, dot, normalize, planeFrame, sub, type Vec3 } from '../geometry/vec3'
 import type { RawPanel } from './panels'
 
 /** One panel edge in a fan. */
@@ -32,14 +32,14 @@ export interface Stretches {
   readonly stretchOf: readonly (readonly (readonly number[])[])[]
 }
 
-/** Angles this close are one direction: two panels back to back. */
-const sameAngle = 1e-6
-
 /**
  * @param panels with one ring edge for every edge of the arrangements
+ * @param on how far points may be off their lines and planes
  * @throws BrokenPromise when outside and inside do not take turns round an edge
  */
-export const findStretches = (panels: readonly RawPanel[], points: readonly Vec3[]): Stretches => {
+export const findStretches = (panels: readonly RawPanel[], points: readonly Vec3[], on: number): Stretches => {
+  // Angles this close are one direction: two panels back to back.
+  const sameAngle = Math.max(1e-6, 20 * on)
   const groups = new Map<number, number>()
   const members: { panel: number; ring: number; edge: number; from: number; to: number }[][] = []
   const groupOf = panels.map((panel, p) =>
@@ -58,7 +58,7 @@ export const findStretches = (panels: readonly RawPanel[], points: readonly Vec3
       }),
     ),
   )
-  const fans = members.map((list) => fanOf(list, panels, points))
+  const fans = members.map((list) => fanOf(list, panels, points, sameAngle))
 
   // Two groups grow together when every ring that runs through one runs straight on through the other.
   const through = new Map<number, number>()
@@ -75,7 +75,8 @@ export const findStretches = (panels: readonly RawPanel[], points: readonly Vec3
         const u = normalize(sub(b, a))
         const v = normalize(sub(c, b))
         const turn = cross(u, v)
-        if (dot(turn, turn) > 1e-12 || dot(u, v) < 0) continue
+        const slack = Math.max(1e-6, (2 * on) / Math.min(distance(a, b), distance(b, c)))
+        if (dot(turn, turn) > slack * slack || dot(u, v) < 0) continue
         const key = Math.min(before, after) * 0x4000000 + Math.max(before, after)
         through.set(key, (through.get(key) ?? 0) + 1)
       }
@@ -118,6 +119,7 @@ const fanOf = (
   list: readonly { panel: number; ring: number; edge: number; from: number; to: number }[],
   panels: readonly RawPanel[],
   points: readonly Vec3[],
+  sameAngle: number,
 ): Blade[] => {
   const { from, to } = list[0]!
   const low = Math.min(from, to)

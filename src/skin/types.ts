@@ -57,6 +57,8 @@ export interface Skin {
   readonly solid: string
   readonly hand: SolidHand
   readonly fill: FillRule
+  /** How far points may be off the planes of their panels; 0 for constructed solids. */
+  readonly slack: number
   readonly points: readonly Vec3[]
   readonly panels: readonly SkinPanel[]
   readonly creases: readonly SkinCrease[]

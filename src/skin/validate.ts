@@ -13,7 +13,7 @@ export interface Check {
 /**
  * Checks a skin: flat panels with true normals and areas, closed (area vectors sum to zero), every ring edge covered by
  * exactly one crease that agrees in its ends, every crease shared by exactly two panels that run along it in opposite
- * directions, inner angles that agree with the normals, bodies and parts as counted.
+ * directions, inner angles that agree with the normals, bodies and parts as counted. Bounds widen by `skin.slack`.
  */
 export const validateSkin = (skin: Skin): Check[] => {
   const checks: Check[] = []
@@ -52,15 +52,23 @@ const flatness = (skin: Skin, at: (i: number) => Vec3, size: number): string[] =
       sum = add(sum, areaVector(ring.map(at)))
       if (new Set(ring).size !== ring.length || ring.length < 3) faults.push(`panel ${p.id}: ring is not simple`)
     }
-    if (Math.abs(dot(sum, p.normal) - p.area) > 1e-9 * Math.max(1, p.area)) faults.push(`panel ${p.id}: area`)
-    if (norm(sub(sum, scale(p.normal, p.area))) > 1e-9 * Math.max(1, p.area)) faults.push(`panel ${p.id}: normal`)
+    // Points off their plane by the slack tilt a panel's area by about that much along its whole outline.
+    const loose = 1e-9 * Math.max(1, p.area) + skin.slack * outline(p.rings, at)
+    if (Math.abs(dot(sum, p.normal) - p.area) > loose) faults.push(`panel ${p.id}: area`)
+    if (norm(sub(sum, scale(p.normal, p.area))) > loose) faults.push(`panel ${p.id}: normal`)
     if (p.area <= 0) faults.push(`panel ${p.id}: no area`)
     const offset = dot(p.normal, at(p.rings[0]![0]!))
     for (const i of p.rings.flat())
-      if (!(Math.abs(dot(p.normal, at(i)) - offset) <= 1e-8 * size)) faults.push(`panel ${p.id}: not flat`)
+      if (!(Math.abs(dot(p.normal, at(i)) - offset) <= 1e-8 * size + skin.slack)) faults.push(`panel ${p.id}: not flat`)
   }
   return faults
 }
+
+const outline = (rings: SkinPanel['rings'], at: (i: number) => Vec3): number =>
+  rings.reduce(
+    (sum, ring) => sum + ring.reduce((s, v, e) => s + distance(at(v), at(ring[(e + 1) % ring.length]!)), 0),
+    0,
+  )
 
 const coverage = (skin: Skin): string[] => {
   const faults: string[] = []
@@ -102,7 +110,8 @@ const angles = (skin: Skin, at: (i: number) => Vec3): string[] => {
     const inner = dips <= 0 ? between : 360 - between
     const off = Math.abs(inner - c.innerAngle)
     // Back to back panels (0 or 360 degrees) have no telling side.
-    if (off > 1e-5 && !(Math.abs(dips) < 1e-9 && Math.abs(360 - off) < 1e-5))
+    const loose = 1e-5 + (300 * skin.slack) / c.length
+    if (off > loose && !(Math.abs(dips) < 1e-9 + (4 * skin.slack) / c.length && Math.abs(360 - off) < loose))
       faults.push(`crease ${c.id}: inner angle ${c.innerAngle}, panels say ${inner}`)
   }
   return faults

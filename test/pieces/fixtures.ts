@@ -62,6 +62,7 @@ export const skinOfMesh = (points: readonly Vec3[], faces: readonly (readonly nu
     solid: name,
     hand: 'none',
     fill: 'nonzero',
+    slack: 0,
     points,
     panels,
     creases,
