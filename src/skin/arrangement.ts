@@ -96,7 +96,7 @@ export const arrange = (
       const axis = cross3(plane.normal, face.frame.normal)
       for (const segment of cut.segments)
         for (const limit of mine.segments) {
-          const common = overlap(segment, limit, axis)
+          const common = overlap(segment, limit, axis, 2 * on)
           if (!common) continue
           if (distance(common[0], common[1]) > tolerance.merge) addSegment(common[0], common[1], face.plane)
           else touches.push(toPlane(frame, common[0]))
@@ -194,14 +194,14 @@ const mergeCuts = (cuts: readonly PlaneCut[]): PlaneCut => ({
   touches: cuts.flatMap((c) => c.touches),
 })
 
-/** What two segments on one line have in common (maybe a point), with `axis` along the line; null if nothing. */
-const overlap = (a: readonly [Vec3, Vec3], b: readonly [Vec3, Vec3], axis: Vec3): [Vec3, Vec3] | null => {
+/** What two segments on one line have in common, maybe a point, with `axis` along the line; null if `near` apart. */
+const overlap = (a: readonly [Vec3, Vec3], b: readonly [Vec3, Vec3], axis: Vec3, near: number): [Vec3, Vec3] | null => {
   const [a0, a1] = dot(axis, a[0]) <= dot(axis, a[1]) ? a : [a[1], a[0]]
   const [b0, b1] = dot(axis, b[0]) <= dot(axis, b[1]) ? b : [b[1], b[0]]
   const from = dot(axis, a0) >= dot(axis, b0) ? a0 : b0
   const to = dot(axis, a1) <= dot(axis, b1) ? a1 : b1
   const length = dot(axis, to) - dot(axis, from)
-  return length >= 0 ? [from, to] : -length <= 1e-9 * Math.sqrt(dot(axis, axis)) ? [from, from] : null
+  return length >= 0 ? [from, to] : -length <= near * Math.sqrt(dot(axis, axis)) ? [from, from] : null
 }
 
 const across = (l: Line, x: number, y: number): number => l.dx * (y - l.py) - l.dy * (x - l.px)

@@ -24,7 +24,7 @@ export const catalogueTolerance: Tolerance = { merge: 1e-8, gap: 1e-5, cell: 2e-
  * @param precision see `Solid.precision`
  */
 export const roughTolerances = (precision: number): Tolerance[] =>
-  [1, 4, 16, 0.25, 64].map((factor) => {
+  [1, 4, 16, 0.25].map((factor) => {
     const on = 2 * Math.max(1e-10, precision * factor)
     // A point may be off its plane on two faces at once, and the planes may meet aslant.
     const merge = 4 * on
