@@ -1,8 +1,9 @@
-/** The command `skin`: what can be touched from outside, for one solid or for all. */
+/** The command `skin`: what can be touched from outside, for one solid or for all 75 uniform ones. */
 import { computeSkin } from '../skin'
 import { buildSolid, listFamily } from '../solids'
 import type { FillRule } from '../solids/types'
 import { knownSolid } from './known-solid'
+import { readModelFile } from './model-file'
 import { textTable } from './text-table'
 
 /** Lengths in unit edges; `ms` is the time that the solid and its skin took. */
@@ -38,4 +39,29 @@ export const skin = (id: string | 'all', fill: FillRule, json: boolean): string 
   if (json) return JSON.stringify(reports, undefined, 1)
   const head = ['id', 'fill', 'panels', 'area edge²', 'volume edge³', 'bodies', 'line contact', 'ms']
   return textTable(head, reports.map(Object.values))
+}
+
+/** As `skin`, for a builder's model; lengths, areas and volume in the file's own unit. */
+export const skinOfFile = (file: string, fill: FillRule, json: boolean): string => {
+  const start = performance.now()
+  const { solid, format, farthest, notes } = readModelFile(file)
+  const skin = computeSkin(solid, fill)
+  const row = {
+    id: solid.id,
+    fill,
+    panels: skin.panels.length,
+    area: skin.area * farthest ** 2,
+    volume: skin.volume * farthest ** 3,
+    bodies: skin.bodies,
+    lineContactLength: skin.lineContactLength * farthest,
+    ms: Math.round(performance.now() - start),
+  }
+  if (json)
+    return JSON.stringify(
+      [{ ...row, format, faces: solid.faces.length, heightUnits: 2 * farthest, notes }],
+      undefined,
+      1,
+    )
+  const head = ['id', 'fill', 'panels', 'area', 'volume', 'bodies', 'line contact', 'ms']
+  return [textTable(head, [Object.values(row)]), ...notes].join('\n')
 }

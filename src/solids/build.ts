@@ -1,36 +1,25 @@
 /** From a constructed polyhedron to a `Solid`: kinds, orbits, hands. */
 import { SnapGrid } from '../geometry/snap'
 import { apply, type Mat3, type Vec3 } from '../geometry/vec3'
+import { polygonName } from './polygon-names'
+import type { RawFace, RawSolid } from './raw'
 import { findIsometries, type Isometries } from './symmetry'
-import type { FaceKind, Solid, SolidFace } from './types'
-import type { RawSolid } from './wythoff'
+import type { FaceKind, Solid, SolidFace, SolidFamily } from './types'
 
-const polygonNames: Readonly<Record<string, string>> = {
-  '3/1': 'triangle',
-  '4/1': 'square',
-  '5/1': 'pentagon',
-  '5/2': 'pentagram',
-  '6/1': 'hexagon',
-  '8/1': 'octagon',
-  '8/3': 'octagram',
-  '10/1': 'decagon',
-  '10/3': 'decagram',
-}
-
-/** English name of {n/d}; d is the polygon's density, under n/2. */
-export const polygonName = (n: number, d: number): string =>
-  polygonNames[`${n}/${d}`] ?? (d === 1 ? `${n}-gon` : `${n}/${d}-gram`)
+/** A face's kind: {n/d} for regular ones, else the name of its shape. */
+const sortOf = (f: RawFace): string => f.shape ?? `${f.cycle.length}/${f.d}`
 
 const kindsOf = (raw: RawSolid): FaceKind[] => {
-  const counts = new Map<string, number>()
-  for (const f of raw.faces) counts.set(`${f.cycle.length}/${f.d}`, (counts.get(`${f.cycle.length}/${f.d}`) ?? 0) + 1)
-  return [...counts.entries()]
-    .map(([key, count]) => {
-      const [n, d] = key.split('/').map(Number) as [number, number]
-      return { id: 0, name: polygonName(n, d), n, d, count }
-    })
+  const kinds = new Map<string, { n: number; d: number; name: string; count: number }>()
+  for (const f of raw.faces) {
+    const kind = kinds.get(sortOf(f))
+    const n = f.cycle.length
+    if (kind) kind.count++
+    else kinds.set(sortOf(f), { n, d: f.d, name: f.shape ?? polygonName(n, f.d), count: 1 })
+  }
+  return [...kinds.values()]
     .sort((a, b) => a.n - b.n || a.d - b.d)
-    .map((kind, id) => ({ ...kind, id }))
+    .map(({ n, d, name, count }, id) => ({ id, name, n, d, count }))
 }
 
 export interface Built {
@@ -38,24 +27,31 @@ export interface Built {
   readonly isometries: Isometries
 }
 
-/** The right-handed (or only) form, with its isometries. */
-export const buildFrom = (raw: RawSolid, id: string, name: string): Built => {
+/**
+ * The right-handed (or only) form, with its isometries.
+ * @param known the isometries, where they need not be sought
+ */
+export const buildFrom = (
+  raw: RawSolid,
+  about: { readonly id: string; readonly name: string; readonly family: SolidFamily },
+  known?: Isometries,
+): Built => {
   const kinds = kindsOf(raw)
   const faces = raw.faces.map((f) => ({
     cycle: f.cycle,
-    kind: kinds.findIndex((k) => k.n === f.cycle.length && k.d === f.d),
+    kind: kinds.findIndex((k) => (f.shape ? k.name === f.shape : k.n === f.cycle.length && k.d === f.d)),
   }))
-  const isometries = findIsometries({ vertices: raw.vertices, faces })
+  const isometries = known ?? findIsometries({ vertices: raw.vertices, faces })
   const chiral = isometries.reflections.length === 0
   return {
     solid: {
-      id,
-      name,
+      ...about,
       hand: chiral ? 'right' : 'none',
       vertices: raw.vertices,
       faces: withOrbits(raw.vertices, faces, isometries.rotations),
       kinds,
       rotations: isometries.rotations,
+      ...(raw.components ? { components: raw.components } : {}),
     },
     isometries,
   }

@@ -9,31 +9,40 @@ const plain = (text: string): string =>
     .replace(/[^a-z0-9]+/g, ' ')
     .trim()
 
-/** Solids that match the query; best matches (whole name, whole word) first, then in the order of the list. */
-export const search = (all: readonly SolidFacts[], query: string): SolidFacts[] => {
+/** An entry that can be searched: its name is at hand, its facts cost a construction. */
+interface Searchable {
+  readonly name: string
+  readonly index: number | null
+  readonly wythoff: string
+  readonly facts: () => SolidFacts
+}
+
+/** Entries that match the query; best matches (whole name, whole word) first, then in the order of the list. */
+export const search = <T extends Searchable>(all: readonly T[], query: string): T[] => {
   const text = query.trim()
   if (text === '') return [...all]
-  if (/^[uU]?\d+$/.test(text)) return all.filter((f) => f.index === Number(text.replace(/^[uU]/, '')))
+  if (/^[uU]?\d+$/.test(text)) return all.filter((e) => e.index === Number(text.replace(/^[uU]/, '')))
   if (text.includes('|')) {
     const wanted = canonicalWythoff(text)
-    return wanted === null ? [] : all.filter((f) => canonicalWythoff(f.wythoff) === wanted)
+    return wanted === null ? [] : all.filter((e) => e.wythoff !== '' && canonicalWythoff(e.wythoff) === wanted)
   }
   const configuration = canonicalConfiguration(text)
-  if (configuration !== null) return all.filter((f) => canonicalConfiguration(f.vertexConfiguration) === configuration)
+  if (configuration !== null)
+    return all.filter((e) => canonicalConfiguration(e.facts().vertexConfiguration) === configuration)
   const wanted = plain(text)
   const words = wanted.split(' ')
-  const score = (f: SolidFacts): number => {
-    const name = plain(f.name)
+  const score = (e: T): number => {
+    const name = plain(e.name)
     if (name === wanted) return 0
     if (name.startsWith(wanted)) return 1
     if (name.includes(wanted)) return 2
     return words.every((w) => name.includes(w)) ? 3 : 4
   }
   return all
-    .map((f, place) => ({ f, place, score: score(f) }))
+    .map((e, place) => ({ e, place, score: score(e) }))
     .filter((x) => x.score < 4)
     .sort((a, b) => a.score - b.score || a.place - b.place)
-    .map((x) => x.f)
+    .map((x) => x.e)
 }
 
 /** Edit distance with insertions, deletions, replacements and swaps of neighbours (optimal string alignment). */

@@ -6,8 +6,11 @@ import {
   cross,
   determinant,
   distance,
+  dot,
+  identity3,
   type Mat3,
   multiply,
+  norm,
   normalize,
   scale,
   sub,
@@ -96,13 +99,39 @@ export const findIsometries = (shape: Shape): Isometries => {
 }
 
 const identityFirst = (list: readonly Mat3[]): Mat3[] => {
-  const trace = (m: Mat3): number => m[0][0] + m[1][1] + m[2][2]
-  return [...list].sort((a, b) => Number(trace(b) > 2.999) - Number(trace(a) > 2.999))
+  return [...list].sort((a, b) => Number(traceOf(b) > 2.999) - Number(traceOf(a) > 2.999))
 }
 
-/** Schoenflies symbol of a polyhedral group. */
+const traceOf = (m: Mat3): number => m[0][0] + m[1][1] + m[2][2]
+
+/** Axis of a rotation by less than half a turn, or of the half turn itself. */
+const axisOf = (m: Mat3): Vec3 => {
+  const skew: Vec3 = [m[2][1] - m[1][2], m[0][2] - m[2][0], m[1][0] - m[0][1]]
+  if (norm(skew) > 1e-6) return normalize(skew)
+  const columns = transpose(m).map((c, i): Vec3 => add(c, identity3[i]!))
+  return normalize(columns.reduce((a, b) => (norm(b) > norm(a) ? b : a)))
+}
+
+/** Schoenflies symbol of a finite group of isometries: I_h, O, T_d, D_7h, D_5d, C_2v, C_1 … */
 export const schoenflies = ({ rotations, reflections }: Isometries): string => {
-  const letter = rotations.length === 60 ? 'I' : rotations.length === 24 ? 'O' : rotations.length === 12 ? 'T' : '?'
+  const order = rotations.length
+  const turning = (n: number): Mat3[] =>
+    rotations.filter((m) => Math.abs(traceOf(m) - 1 - 2 * Math.cos((2 * Math.PI) / n)) < 1e-6)
+  const inverts = reflections.some((m) => traceOf(m) < -3 + 1e-6)
+  if (order === 1) return reflections.length === 0 ? 'C_1' : inverts ? 'C_i' : 'C_s'
+  const mirrors = reflections.filter((m) => Math.abs(traceOf(m) - 1) < 1e-6)
+  /** A mirror at right angles to one of the axes of order n. */
+  const levelMirror = (n: number): boolean =>
+    turning(n).some((r) => mirrors.some((m) => dot(apply(m, axisOf(r)), axisOf(r)) < -1 + 1e-6))
+  if (turning(order).length > 0) {
+    if (reflections.length === 0) return `C_${order}`
+    return levelMirror(order) ? `C_${order}h` : mirrors.length > 0 ? `C_${order}v` : `S_${2 * order}`
+  }
+  if (turning(order / 2).length > 0) {
+    if (reflections.length === 0) return `D_${order / 2}`
+    return `D_${order / 2}${levelMirror(order / 2) ? 'h' : 'd'}`
+  }
+  const letter = order === 60 ? 'I' : order === 24 ? 'O' : order === 12 ? 'T' : '?'
   if (reflections.length === 0) return letter
-  return letter === 'T' ? 'T_d' : `${letter}_h`
+  return letter === 'T' && !inverts ? 'T_d' : `${letter}_h`
 }

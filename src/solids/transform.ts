@@ -46,12 +46,14 @@ const shuffle = (solid: Solid, seed: number): Solid => {
     placeOf[old] = place
   })
   const vertices = order.map((old) => solid.vertices[old] as Vec3)
-  const faces = permutation(solid.faces.length).map((i): SolidFace => {
+  const faceOrder = permutation(solid.faces.length)
+  const faces = faceOrder.map((i): SolidFace => {
     const face = solid.faces[i]!
     const cycle = face.cycle.map((v) => placeOf[v]!)
     const turn = random.below(cycle.length)
     const turned = [...cycle.slice(turn), ...cycle.slice(0, turn)]
     return { ...face, cycle: random.next() < 0.5 ? turned : turned.reverse() }
   })
-  return { ...solid, vertices, faces }
+  const { components } = solid
+  return { ...solid, vertices, faces, ...(components ? { components: faceOrder.map((i) => components[i]!) } : {}) }
 }

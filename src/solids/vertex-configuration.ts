@@ -1,7 +1,7 @@
 /** Vertex configurations: the faces round a vertex in order, retrograde ones as n/d with d > n/2. */
-import { BrokenPromise } from '../errors'
 import { cross, dot, normalize, planeFrame, sub, type Vec3 } from '../geometry/vec3'
 import type { Solid } from './types'
+import { cornersOf, ringOf } from './vertex-ring'
 
 interface Step {
   readonly n: number
@@ -19,31 +19,18 @@ export interface VertexConfiguration {
 /** Walks the faces round one vertex and adds up the angles under which they are seen along the axis. */
 export const vertexConfiguration = (solid: Solid, vertex: number): VertexConfiguration => {
   const p = solid.vertices[vertex]!
-  const here = solid.faces.flatMap((face, i) => {
-    const k = face.cycle.indexOf(vertex)
-    if (k < 0) return []
-    const n = face.cycle.length
-    return [{ face: i, ends: [face.cycle[(k + n - 1) % n]!, face.cycle[(k + 1) % n]!] as const }]
-  })
   const { u, v } = planeFrame(normalize(p))
   const bearing = (q: number): number => {
     const d = sub(solid.vertices[q]!, p)
     return Math.atan2(dot(d, v), dot(d, u))
   }
-  const visited = new Set<number>()
-  const walk: { face: number; angle: number }[] = []
-  let at = here[0]!.ends[0]
-  for (let k = 0; k < here.length; k++) {
-    const next = here.find((h) => !visited.has(h.face) && h.ends.includes(at))
-    if (!next) throw new BrokenPromise('The faces round a vertex do not form one ring.', { vertex })
-    visited.add(next.face)
-    const to = next.ends[0] === at ? next.ends[1] : next.ends[0]
-    let angle = bearing(to) - bearing(at)
+  const corners = cornersOf(solid, solid.vertices.length)[vertex]!
+  const walk = ringOf(corners, vertex).map(({ face, from, to }) => {
+    let angle = bearing(to) - bearing(from)
     if (angle <= -Math.PI + 1e-9) angle += 2 * Math.PI
     if (angle > Math.PI + 1e-9) angle -= 2 * Math.PI
-    walk.push({ face: next.face, angle })
-    at = to
-  }
+    return { face, angle }
+  })
   // Faces through the centre are seen edge-on, as half a turn either way: they decide nothing.
   const edgeOn = (angle: number): boolean => Math.abs(Math.abs(angle) - Math.PI) < 1e-6
   const turning = walk.reduce((s, w) => s + (edgeOn(w.angle) ? 0 : w.angle), 0)
@@ -97,10 +84,12 @@ const order = (a: readonly string[], b: readonly string[]): number => {
 
 /**
  * One spelling for configurations that mean the same: a cyclic shift, a reversal, or every n/d turned into n/(n − d) is the
- * same figure. Null if the text is no configuration.
+ * same figure. A V before it, as for the faces of a dual, is kept. Null if the text is no configuration.
  */
 export const canonicalConfiguration = (text: string): string | null => {
-  const match = /^\(?([\d./\s]+)\)?(?:\/(\d+))?$/.exec(text.trim())
+  const face = /^[vV]\s*(?=[\d(])/.exec(text.trim())?.[0] ?? ''
+  const figure = text.trim().slice(face.length)
+  const match = /^\(?([\d./\s]+)\)?(?:\/(\d+))?$/.exec(figure)
   if (!match) return null
   const parts = match[1]!.split('.').map((s) => s.trim())
   if (parts.length < 3 || !parts.every((s) => /^\d+(\/\d+)?$/.test(s))) return null
@@ -111,8 +100,8 @@ export const canonicalConfiguration = (text: string): string | null => {
   })
   const a = smallest(parts)
   const b = smallest(turned)
-  const windings = text.trim().startsWith('(') ? (match[2] ?? '1') : '1'
-  return `${(order(a, b) <= 0 ? a : b).join('.')} w${windings}`
+  const windings = figure.startsWith('(') ? (match[2] ?? '1') : '1'
+  return `${face ? 'V' : ''}${(order(a, b) <= 0 ? a : b).join('.')} w${windings}`
 }
 
 /** Angle in degrees between two faces at a shared edge, measured through the side where both lie: 0 to 180. */

@@ -5,14 +5,9 @@
 import { BrokenPromise } from '../errors'
 import { SnapGrid } from '../geometry/snap'
 import { add, apply, cross, distance, dot, type Mat3, norm, normalize, scale, sub, type Vec3 } from '../geometry/vec3'
+import type { RawSolid } from './raw'
 import { generateGroup, reflect, type SchwarzTriangle, schwarzTriangle } from './schwarz'
 import { type Rational, readWythoff, type WythoffSymbol } from './wythoff-symbol'
-
-/** Unit edge, centred; a face is the cycle of its vertices, with the density of its polygon. */
-export interface RawSolid {
-  readonly vertices: readonly Vec3[]
-  readonly faces: readonly { readonly cycle: readonly number[]; readonly d: number }[]
-}
 
 /** A face before it is spread by the group: its corners in space. */
 type Polygon = readonly Vec3[]

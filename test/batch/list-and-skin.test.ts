@@ -4,16 +4,28 @@ import { batch, npmBatch, words } from './run'
 const oneLine = /^[^\n]+\n$/
 
 describe('batch list', () => {
-  test('gives the 75 with exactly the promised fields', async () => {
+  test('gives the 75 and the families with exactly the promised fields', async () => {
     const { code, stdout, stderr } = await npmBatch(['list', '--json'])
     expect({ code, stderr }).toEqual({ code: 0, stderr: '' })
     const facts = JSON.parse(stdout) as Record<string, unknown>[]
-    expect(facts.map(({ index }) => index)).toEqual(Array.from({ length: 75 }, (_, i) => i + 1))
+    expect(facts.map(({ index }) => index)).toEqual(
+      Array.from({ length: facts.length }, (_, i) => (i < 75 ? i + 1 : null)),
+    )
+    const counts = new Map<unknown, number>()
+    for (const { family } of facts) counts.set(family, (counts.get(family) ?? 0) + 1)
+    // φ(3) + … + φ(24) = 178, half of it {n/d}; 75 − 9 regular − 10 with faces through the centre; Regular Polytopes (1948).
+    expect([...counts]).toEqual([
+      ['uniform', 75],
+      ['prism', 88],
+      ['antiprism', 117],
+      ['dual', 56],
+      ['compound', 5],
+    ])
     for (const entry of facts)
       expect(Object.keys(entry)).toEqual(
         words(
-          `id index name wythoff vertexConfiguration vertices edges faces euler density chiral orientable symmetry
-           circumradius`.replace(/\s+/g, ' '),
+          `id index family name wythoff vertexConfiguration vertices edges faces euler density chiral orientable symmetry
+           circumradius dual components notes`.replace(/\s+/g, ' '),
         ),
       )
     // From memory, as every table of uniform polyhedra has it.
@@ -33,8 +45,8 @@ describe('batch list', () => {
     const { code, stdout } = await batch(['list'])
     expect(code).toBe(0)
     const lines = stdout.trimEnd().split('\n')
-    expect(lines).toHaveLength(76)
-    expect(lines[6]).toMatch(/^ +6 {2}cube +3 \| 2 4 +4\.4\.4 +8 +12 +6 +1 +no +O_h +0\.8660$/)
+    expect(lines).toHaveLength(1 + 341)
+    expect(lines[6]).toMatch(/^ +6 {2}uniform +cube +3 \| 2 4 +4\.4\.4 +8 +12 +6 +1 +no +O_h +0\.8660$/)
   })
 })
 
@@ -73,6 +85,7 @@ describe('batch: what cannot be followed', () => {
       'skin great-icosahedrom --json',
       /There is no solid great-icosahedrom; the nearest ids are .*\bgreat-icosahedron\b/,
     ],
+    ['skin tetrahemihexacron', /The tetrahemihexacron cannot be built: 3 of the 7 faces .* at infinity/],
     ['plan cubes --height 250 --out /tmp/x', /There is no solid cubes; the nearest ids are .*\bcube\b/],
     ['plan cube --height 250mm --out /tmp/x', /The height 250mm is not a number; .* from 10 to 2000/],
     ['plan cube --height 9 --out /tmp/x', /The height 9 is out of range; .* from 10 to 2000/],

@@ -1,0 +1,96 @@
+/**
+ * Names of the duals, in the order of the 75: the Catalan solids and the usual names of the star duals, all from memory.
+ * Geometry: "Closed-form expressions for uniform polyhedra and their duals", Discrete & Computational Geometry 27 (2002).
+ *
+ * `uniform`: the dual is similar to one of the 75 and is not listed a second time. `infinite`: faces of the original pass
+ * through its centre, so that the dual has vertices at infinity and cannot be built.
+ */
+export interface DualName {
+  readonly original: string
+  readonly name: string
+  readonly is: 'listed' | 'uniform' | 'infinite'
+}
+
+const table: readonly (readonly [original: string, name: string, is?: 'uniform' | 'infinite'])[] = [
+  ['tetrahedron', 'tetrahedron', 'uniform'],
+  ['truncated tetrahedron', 'triakis tetrahedron'],
+  ['octahemioctahedron', 'octahemioctacron', 'infinite'],
+  ['tetrahemihexahedron', 'tetrahemihexacron', 'infinite'],
+  ['octahedron', 'cube', 'uniform'],
+  ['cube', 'octahedron', 'uniform'],
+  ['cuboctahedron', 'rhombic dodecahedron'],
+  ['truncated octahedron', 'tetrakis hexahedron'],
+  ['truncated cube', 'triakis octahedron'],
+  ['rhombicuboctahedron', 'deltoidal icositetrahedron'],
+  ['truncated cuboctahedron', 'disdyakis dodecahedron'],
+  ['snub cube', 'pentagonal icositetrahedron'],
+  ['small cubicuboctahedron', 'small hexacronic icositetrahedron'],
+  ['great cubicuboctahedron', 'great hexacronic icositetrahedron'],
+  ['cubohemioctahedron', 'hexahemioctacron', 'infinite'],
+  ['cubitruncated cuboctahedron', 'tetradyakis hexahedron'],
+  ['nonconvex great rhombicuboctahedron', 'great deltoidal icositetrahedron'],
+  ['small rhombihexahedron', 'small rhombihexacron'],
+  ['stellated truncated hexahedron', 'great triakis octahedron'],
+  ['great truncated cuboctahedron', 'great disdyakis dodecahedron'],
+  ['great rhombihexahedron', 'great rhombihexacron'],
+  ['icosahedron', 'dodecahedron', 'uniform'],
+  ['dodecahedron', 'icosahedron', 'uniform'],
+  ['icosidodecahedron', 'rhombic triacontahedron'],
+  ['truncated icosahedron', 'pentakis dodecahedron'],
+  ['truncated dodecahedron', 'triakis icosahedron'],
+  ['rhombicosidodecahedron', 'deltoidal hexecontahedron'],
+  ['truncated icosidodecahedron', 'disdyakis triacontahedron'],
+  ['snub dodecahedron', 'pentagonal hexecontahedron'],
+  ['small ditrigonal icosidodecahedron', 'small triambic icosahedron'],
+  ['small icosicosidodecahedron', 'small icosacronic hexecontahedron'],
+  ['small snub icosicosidodecahedron', 'small hexagonal hexecontahedron'],
+  ['small dodecicosidodecahedron', 'small dodecacronic hexecontahedron'],
+  ['small stellated dodecahedron', 'great dodecahedron', 'uniform'],
+  ['great dodecahedron', 'small stellated dodecahedron', 'uniform'],
+  ['dodecadodecahedron', 'medial rhombic triacontahedron'],
+  ['truncated great dodecahedron', 'small stellapentakis dodecahedron'],
+  ['rhombidodecadodecahedron', 'medial deltoidal hexecontahedron'],
+  ['small rhombidodecahedron', 'small rhombidodecacron'],
+  ['snub dodecadodecahedron', 'medial pentagonal hexecontahedron'],
+  ['ditrigonal dodecadodecahedron', 'medial triambic icosahedron'],
+  ['great ditrigonal dodecicosidodecahedron', 'great ditrigonal dodecacronic hexecontahedron'],
+  ['small ditrigonal dodecicosidodecahedron', 'small ditrigonal dodecacronic hexecontahedron'],
+  ['icosidodecadodecahedron', 'medial icosacronic hexecontahedron'],
+  ['icositruncated dodecadodecahedron', 'tridyakis icosahedron'],
+  ['snub icosidodecadodecahedron', 'medial hexagonal hexecontahedron'],
+  ['great ditrigonal icosidodecahedron', 'great triambic icosahedron'],
+  ['great icosicosidodecahedron', 'great icosacronic hexecontahedron'],
+  ['small icosihemidodecahedron', 'small icosihemidodecacron', 'infinite'],
+  ['small dodecicosahedron', 'small dodecicosacron'],
+  ['small dodecahemidodecahedron', 'small dodecahemidodecacron', 'infinite'],
+  ['great stellated dodecahedron', 'great icosahedron', 'uniform'],
+  ['great icosahedron', 'great stellated dodecahedron', 'uniform'],
+  ['great icosidodecahedron', 'great rhombic triacontahedron'],
+  ['truncated great icosahedron', 'great stellapentakis dodecahedron'],
+  ['rhombicosahedron', 'rhombicosacron'],
+  ['great snub icosidodecahedron', 'great pentagonal hexecontahedron'],
+  ['small stellated truncated dodecahedron', 'great pentakis dodecahedron'],
+  ['truncated dodecadodecahedron', 'medial disdyakis triacontahedron'],
+  ['inverted snub dodecadodecahedron', 'medial inverted pentagonal hexecontahedron'],
+  ['great dodecicosidodecahedron', 'great dodecacronic hexecontahedron'],
+  ['small dodecahemicosahedron', 'small dodecahemicosacron', 'infinite'],
+  ['great dodecicosahedron', 'great dodecicosacron'],
+  ['great snub dodecicosidodecahedron', 'great hexagonal hexecontahedron'],
+  ['great dodecahemicosahedron', 'great dodecahemicosacron', 'infinite'],
+  ['great stellated truncated dodecahedron', 'great triakis icosahedron'],
+  ['nonconvex great rhombicosidodecahedron', 'great deltoidal hexecontahedron'],
+  ['great truncated icosidodecahedron', 'great disdyakis triacontahedron'],
+  ['great inverted snub icosidodecahedron', 'great inverted pentagonal hexecontahedron'],
+  ['great dodecahemidodecahedron', 'great dodecahemidodecacron', 'infinite'],
+  ['great icosihemidodecahedron', 'great icosihemidodecacron', 'infinite'],
+  ['small retrosnub icosicosidodecahedron', 'small hexagrammic hexecontahedron'],
+  ['great rhombidodecahedron', 'great rhombidodecacron'],
+  ['great retrosnub icosidodecahedron', 'great pentagrammic hexecontahedron'],
+  ['great dirhombicosidodecahedron', 'great dirhombicosidodecacron', 'infinite'],
+]
+
+export const dualNames: readonly DualName[] = table.map(([original, name, is]) => ({
+  original,
+  name,
+  is: is ?? 'listed',
+}))
