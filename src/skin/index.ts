@@ -14,10 +14,11 @@ import { collectPanels, type RawPanel } from './panels'
 import { carriedFaces, findPlanes, frameOf } from './planes'
 import { findStretches } from './stretches'
 import { catalogueTolerance, roughTolerances, type Tolerance } from './tolerance'
+import { findTouches } from './touching'
 import type { LineContact, Skin, SkinCrease, SkinPanel } from './types'
 import { validateSkin } from './validate'
 
-export type { LineContact, Skin, SkinCrease, SkinPanel } from './types'
+export type { LineContact, Skin, SkinCrease, SkinPanel, Touch } from './types'
 export { validateSkin } from './validate'
 
 /**
@@ -175,6 +176,7 @@ const assemble = (
   const kept: Vec3[] = []
   for (const [v, id] of used) kept[id] = points[v]!
   const endsOf = ([a, b]: readonly [number, number]): [number, number] => [renumber(a), renumber(b)]
+  const renumbered = creases.map((c) => ({ ...c, ends: endsOf(c.ends) }))
   const skin: Skin = {
     solid: solid.id,
     hand: solid.hand,
@@ -182,8 +184,9 @@ const assemble = (
     slack,
     points: kept,
     panels,
-    creases: creases.map((c) => ({ ...c, ends: endsOf(c.ends) })),
+    creases: renumbered,
     contacts: contacts.map((c) => ({ ...c, ends: endsOf(c.ends) })),
+    touches: pairing.bodies > 1 ? findTouches({ points: kept, panels, creases: renumbered, slack }) : [],
     bodies: pairing.bodies,
     parts: pairing.parts,
     lineContactLength: contacts.reduce((sum, c) => sum + c.length, 0),

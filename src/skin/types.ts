@@ -52,6 +52,19 @@ export interface LineContact {
   readonly bodies: readonly number[]
 }
 
+/**
+ * A place where bodies touch that no crease tells of: at one point, or along an edge that lies on the middle of a panel.
+ * Nothing holds there unless a gusset or a strip is put in.
+ */
+export interface Touch {
+  readonly kind: 'point' | 'line'
+  /** One point, or the two ends of a stretch. */
+  readonly ends: readonly Vec3[]
+  readonly length: number
+  readonly bodies: readonly number[]
+  readonly panels: readonly number[]
+}
+
 /** The boundary of the unbounded outside. Lengths in unit edges. */
 export interface Skin {
   readonly solid: string
@@ -63,6 +76,8 @@ export interface Skin {
   readonly panels: readonly SkinPanel[]
   readonly creases: readonly SkinCrease[]
   readonly contacts: readonly LineContact[]
+  /** Where bodies touch besides. */
+  readonly touches: readonly Touch[]
   /** Closed parts with every line contact paired through the inside. */
   readonly bodies: number
   /** Connected parts with the pairing chosen in `contacts`: 1 when the model can be built as one thing. */

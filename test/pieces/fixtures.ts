@@ -67,6 +67,7 @@ export const skinOfMesh = (points: readonly Vec3[], faces: readonly (readonly nu
     panels,
     creases,
     contacts: [],
+    touches: [],
     bodies: 1,
     parts: 1,
     lineContactLength: 0,
