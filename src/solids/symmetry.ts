@@ -30,6 +30,26 @@ export interface Isometries {
   readonly reflections: readonly Mat3[]
 }
 
+/** Whether m is in the list, to rounding; most others differ in the first number already. */
+const contains = (list: readonly Mat3[], m: Mat3): boolean => {
+  for (const x of list) {
+    if (Math.abs(x[0][0] - m[0][0]) > 1e-6 || Math.abs(x[0][1] - m[0][1]) > 1e-6) continue
+    if (distance(x[0], m[0]) < 1e-6 && distance(x[1], m[1]) < 1e-6 && distance(x[2], m[2]) < 1e-6) return true
+  }
+  return false
+}
+
+/** All products of the generators, which are isometries of one finite shape. */
+const generated = (generators: readonly Mat3[]): Mat3[] => {
+  const elements: Mat3[] = [identity3]
+  for (const element of elements)
+    for (const g of generators) {
+      const m = multiply(g, element)
+      if (!contains(elements, m)) elements.push(m)
+    }
+  return elements
+}
+
 /** Right-handed (or, mirrored, left-handed) orthonormal frame on a flag: vertex, next vertex, face centre. */
 const flagFrame = (vertex: Vec3, next: Vec3, centre: Vec3, handed: 1 | -1): Mat3 => {
   const u = normalize(sub(next, vertex))
@@ -79,7 +99,16 @@ export const findIsometries = (shape: Shape): Isometries => {
       ),
     )
   }
-  const same = (a: Mat3, b: Mat3): boolean => a.every((row, i) => distance(row, b[i]!) < 1e-6)
+  // A candidate that is a product of isometries found before need not be tried on all faces.
+  const generators: Mat3[] = []
+  let group: Mat3[] = [identity3]
+  const isIsometry = (m: Mat3): boolean => {
+    if (contains(group, m)) return true
+    if (!maps(m)) return false
+    generators.push(m)
+    group = generated(generators)
+    return true
+  }
   const found: { 1: Mat3[]; '-1': Mat3[] } = { 1: [], '-1': [] }
   faces.forEach((f, i) => {
     if (f.kind !== rarest) return
@@ -91,7 +120,7 @@ export const findIsometries = (shape: Shape): Isometries => {
           const b = vertices[f.cycle[(k + step) % n]!]!
           const m = multiply(flagFrame(a, b, centres[i]!, handed), transpose(from))
           const list = found[handed]
-          if (!list.some((x) => same(x, m)) && maps(m)) list.push(m)
+          if (!contains(list, m) && isIsometry(m)) list.push(m)
         }
   })
   const rotations = found[1].filter((m) => determinant(m) > 0)
