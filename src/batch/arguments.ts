@@ -1,32 +1,41 @@
 /** Reads the command line. What is wrong with it becomes an `InputError` of one line that says what would be right. */
 import { parseArgs } from 'node:util'
 import { InputError } from '../errors'
+import { isModelUnit, type ModelUnit, modelUnits } from '../models'
 import { greatestHeightMm, leastHeightMm, usualChoices } from '../plan/choices'
 import type { FillRule } from '../solids/types'
+
+/** What a plan is made of, and how large: a file's own unit may stand for the height. */
+export type PlanSubject =
+  | { readonly id: string; readonly heightMm: number }
+  | { readonly file: string; readonly heightMm: number }
+  | { readonly file: string; readonly unit: ModelUnit }
 
 export type Command =
   | { readonly name: 'help' }
   | { readonly name: 'list'; readonly json: boolean }
-  | { readonly name: 'skin'; readonly id: string | 'all'; readonly fill: FillRule; readonly json: boolean }
-  | {
+  | ({ readonly name: 'skin'; readonly fill: FillRule; readonly json: boolean } & (
+      | { readonly id: string | 'all' }
+      | { readonly file: string }
+    ))
+  | ({
       readonly name: 'plan'
-      readonly id: string
-      readonly heightMm: number
       readonly paper: 'a4' | 'letter'
       readonly fill: FillRule
       readonly hand: 'left' | 'right'
       readonly side: 'outside' | 'inside'
       readonly colours: 'one' | 'kind'
       readonly out: string
-    }
+    } & PlanSubject)
 
 export const usage = `Use:
   npm run --silent batch -- list [--json]
       the solids and their facts
-  npm run --silent batch -- skin ID | --all [--fill nonzero|evenodd] [--json]
-      what can be touched from outside: panels, area, volume, bodies (unit edge)
-  npm run --silent batch -- plan ID --height MM --out DIR [--paper a4|letter] [--fill nonzero|evenodd]
+  npm run --silent batch -- skin ID | --all | --file MODEL [--fill nonzero|evenodd] [--json]
+      what can be touched from outside: panels, area, volume, bodies (unit edge; of a file: its own unit)
+  npm run --silent batch -- plan ID | --file MODEL --height MM --out DIR [--paper a4|letter] [--fill nonzero|evenodd]
                             [--hand left|right] [--side outside|inside] [--colours one|kind]
+      MODEL is an OBJ, STL or PLY file; with --unit mm|cm|m|in instead of --height it keeps its size
       writes plan.json and sheets.pdf into DIR; MM is the diameter of the sphere through the vertices, ${leastHeightMm} to ${greatestHeightMm}
 
 Without --json a table for reading. Exit code 0: done; 2: the command line cannot be followed; 1: anything else.`
@@ -36,7 +45,7 @@ const value = { type: 'string' } as const
 
 const optionsOf = {
   list: { json: flag, help: flag },
-  skin: { all: flag, fill: value, json: flag, help: flag },
+  skin: { all: flag, fill: value, file: value, json: flag, help: flag },
   plan: {
     height: value,
     out: value,
@@ -45,6 +54,8 @@ const optionsOf = {
     hand: value,
     side: value,
     colours: value,
+    file: value,
+    unit: value,
     help: flag,
   },
 } as const
@@ -54,6 +65,8 @@ const isCommand = (text: string): text is Name => Object.hasOwn(optionsOf, text)
 const examples: Readonly<Record<string, string>> = {
   height: '--height 250',
   out: '--out my-plan',
+  file: '--file model.obj',
+  unit: '--unit mm or --unit in',
   paper: '--paper a4 or --paper letter',
   fill: '--fill nonzero or --fill evenodd',
   hand: '--hand left or --hand right',
@@ -121,6 +134,31 @@ const oneId = (name: Name, ids: readonly string[], orElse: string): string => {
   return id
 }
 
+/** The model's file, or null when a solid of the catalogue is asked for. */
+const readFileName = (given: Given, ids: readonly string[]): string | null => {
+  const { file } = given
+  if (file === undefined) return null
+  if (typeof file !== 'string' || file === '') throw new InputError('Say which file: --file model.obj.', '--file')
+  if (ids[0] !== undefined) throw new InputError(`Say either ${ids[0]} or --file, not both.`, '--file')
+  return file
+}
+
+const readSubject = (given: Given, ids: readonly string[]): PlanSubject => {
+  const file = readFileName(given, ids)
+  const { unit } = given
+  if (file === null) {
+    if (unit !== undefined)
+      throw new InputError('--unit goes with --file; say the height of a solid: --height 250.', '--unit')
+    return { id: oneId('plan', ids, ' --height 250 --out DIR'), heightMm: readHeight(given.height) }
+  }
+  if (unit === undefined) return { file, heightMm: readHeight(given.height) }
+  if (given.height !== undefined)
+    throw new InputError('Say either --height or --unit, not both: the unit already gives the size.', '--unit')
+  if (typeof unit !== 'string' || !isModelUnit(unit))
+    throw new InputError(`--unit is ${Object.keys(modelUnits).join(', ')}, not ${String(unit)}.`, '--unit')
+  return { file, unit }
+}
+
 /** @param args the words after the program's name */
 export const readCommand = (args: readonly string[]): Command => {
   const [name, ...rest] = args
@@ -138,19 +176,23 @@ export const readCommand = (args: readonly string[]): Command => {
       return { name, json }
     case 'skin': {
       if (given.all && ids[0] !== undefined) throw new InputError(`Say either ${ids[0]} or --all, not both.`, '--all')
+      const file = readFileName(given, ids)
+      const fill = choose(given, 'fill', fills, usualChoices.fill)
+      if (file !== null) {
+        if (given.all) throw new InputError('Say either --file or --all, not both.', '--all')
+        return { name, file, fill, json }
+      }
       const id = given.all ? 'all' : oneId(name, ids, ' or skin --all')
-      return { name, id, fill: choose(given, 'fill', fills, usualChoices.fill), json }
+      return { name, id, fill, json }
     }
     case 'plan': {
-      const id = oneId(name, ids, ' --height 250 --out DIR')
-      const heightMm = readHeight(given.height)
+      const subject = readSubject(given, ids)
       const { out } = given
       if (typeof out !== 'string' || out === '')
         throw new InputError('Say where to write plan.json and sheets.pdf, for example --out my-plan.', '--out')
       return {
         name,
-        id,
-        heightMm,
+        ...subject,
         paper: choose(given, 'paper', ['a4', 'letter'], usualChoices.paper),
         fill: choose(given, 'fill', fills, usualChoices.fill),
         hand: choose(given, 'hand', ['left', 'right'], usualChoices.hand),

@@ -6,6 +6,9 @@ import { InputError } from '../errors'
 const typedFrom = (): string =>
   (process.env.npm_lifecycle_event === 'batch' ? process.env.INIT_CWD : undefined) ?? process.cwd()
 
+/** The path that is meant by what was typed. */
+export const typedPath = (typed: string): string => resolve(typedFrom(), typed)
+
 /**
  * Makes a folder and those above it one at a time. Node's own recursive mkdir never comes back where a file system says
  * that a folder is missing right after it was asked to make it (such as /proc).
@@ -21,7 +24,7 @@ const makeFolders = (folder: string): void => {
  * @throws InputError when it cannot be written to
  */
 export const writableFolder = (typed: string): string => {
-  const folder = resolve(typedFrom(), typed)
+  const folder = typedPath(typed)
   try {
     makeFolders(folder)
     const probe = join(folder, `.probe-${process.pid}`)

@@ -2,7 +2,7 @@
 import { InputError } from '../errors'
 import { readCommand, usage } from './arguments'
 import { list } from './list'
-import { skin } from './skin'
+import { skin, skinOfFile } from './skin'
 
 const run = async (args: readonly string[]): Promise<string> => {
   const command = readCommand(args)
@@ -12,7 +12,9 @@ const run = async (args: readonly string[]): Promise<string> => {
     case 'list':
       return list(command.json)
     case 'skin':
-      return skin(command.id, command.fill, command.json)
+      return 'file' in command
+        ? skinOfFile(command.file, command.fill, command.json)
+        : skin(command.id, command.fill, command.json)
     case 'plan':
       // Late, so that the other commands need not load clipping and PDF.
       return (await import('./plan')).plan(command)

@@ -2,13 +2,24 @@
 import { writeFileSync } from 'node:fs'
 import { join } from 'node:path'
 import { drawPlan } from '../drawing'
-import type { Progress } from '../errors'
+import { InputError, type Progress } from '../errors'
+import { placed, unitHeightMm } from '../models'
 import { writePdf } from '../output'
-import { makePlan, type PlanChoices, type PlanDocket, usualChoices } from '../plan'
+import {
+  checkChoices,
+  greatestHeightMm,
+  leastHeightMm,
+  type PlanChoices,
+  type PlanDocket,
+  planSolid,
+  usualChoices,
+} from '../plan'
 import { planText } from '../plan/file'
+import { buildSolid, type Solid } from '../solids'
 import type { Command } from './arguments'
 import { writableFolder } from './folder'
 import { knownSolid } from './known-solid'
+import { readModelFile } from './model-file'
 
 /** Stage and per cent on one line of a terminal; nothing where standard error goes to a file. */
 const terminalProgress = (): Progress => {
@@ -32,14 +43,54 @@ const summary = (name: string, docket: PlanDocket): string[] => [
   `narrowest panel ${docket.tightest.widthMm.toFixed(1)} mm, sharpest inner angle ${docket.sharpestInnerAngle.toFixed(1)}°`,
 ]
 
+interface Subject {
+  readonly solid: Solid
+  readonly heightMm: number
+  /** What was repaired in a file. */
+  readonly notes: readonly string[]
+  /** Says where in the file an error of a later stage belongs. */
+  readonly explain: (error: unknown) => unknown
+}
+
+const subjectOf = (command: PlanCommand, progress: Progress): Subject => {
+  if ('id' in command)
+    return {
+      solid: buildSolid(command.id, command.hand),
+      heightMm: command.heightMm,
+      notes: [],
+      explain: (error) => error,
+    }
+  const model = readModelFile(command.file, progress)
+  const heightMm = 'unit' in command ? unitHeightMm(model.farthest, command.unit) : command.heightMm
+  if ('unit' in command && (heightMm < leastHeightMm || heightMm > greatestHeightMm))
+    throw new InputError(
+      `In ${command.unit} the model is ${Number(heightMm.toPrecision(4))} mm high, ${leastHeightMm} to ${greatestHeightMm} mm ` +
+        'can be planned; say another unit, or --height 250.',
+      '--unit',
+    )
+  return { solid: model.solid, heightMm, notes: model.notes, explain: (error) => placed(error, model, command.file) }
+}
+
+type PlanCommand = Extract<Command, { name: 'plan' }>
+
 /** @throws Error when the plan fails a check of its own; it is written all the same */
-export const plan = async (command: Extract<Command, { name: 'plan' }>): Promise<string> => {
-  const { id, out, heightMm, paper, fill, hand, side, colours } = command
-  knownSolid(id)
+export const plan = async (command: PlanCommand): Promise<string> => {
+  const { out, paper, fill, hand, side, colours } = command
+  const progress = terminalProgress()
+  if ('id' in command) knownSolid(command.id)
   const folder = writableFolder(out)
-  const choices: PlanChoices = { ...usualChoices, solid: id, heightMm, paper, fill, hand, side, colours }
-  const made = makePlan(choices, terminalProgress())
-  clearProgress()
+  const { solid, heightMm, notes, explain } = subjectOf(command, progress)
+  const choices: PlanChoices = { ...usualChoices, solid: solid.id, heightMm, paper, fill, hand, side, colours }
+  checkChoices(choices)
+  const made = (() => {
+    try {
+      return planSolid(solid, choices, progress)
+    } catch (error) {
+      throw explain(error)
+    } finally {
+      clearProgress()
+    }
+  })()
   const files = { json: join(folder, 'plan.json'), pdf: join(folder, 'sheets.pdf') }
   writeFileSync(files.json, planText(made))
   writeFileSync(files.pdf, await writePdf(drawPlan(made, choices)))
@@ -48,5 +99,5 @@ export const plan = async (command: Extract<Command, { name: 'plan' }>): Promise
     const list = failed.map(({ name, detail }) => `${name}: ${detail}`).join('\n')
     throw new Error(`The plan does not keep its promises; do not build from it.\n${list}\n${files.json}`)
   }
-  return [...summary(made.model.name, made.docket), files.json, files.pdf].join('\n')
+  return [...summary(made.model.name, made.docket), ...notes, files.json, files.pdf].join('\n')
 }

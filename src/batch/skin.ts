@@ -1,5 +1,7 @@
 /** The command `skin`: what can be touched from outside, for one solid or for all 75 uniform ones. */
+import { placed } from '../models'
 import { computeSkin } from '../skin'
+import { refuseLooseWalls } from '../skin/loose-walls'
 import { buildSolid, listFamily } from '../solids'
 import type { FillRule } from '../solids/types'
 import { knownSolid } from './known-solid'
@@ -44,8 +46,17 @@ export const skin = (id: string | 'all', fill: FillRule, json: boolean): string 
 /** As `skin`, for a builder's model; lengths, areas and volume in the file's own unit. */
 export const skinOfFile = (file: string, fill: FillRule, json: boolean): string => {
   const start = performance.now()
-  const { solid, format, farthest, notes } = readModelFile(file)
-  const skin = computeSkin(solid, fill)
+  const model = readModelFile(file)
+  const { solid, format, farthest, notes } = model
+  const skin = (() => {
+    try {
+      const found = computeSkin(solid, fill)
+      refuseLooseWalls(solid, found)
+      return found
+    } catch (error) {
+      throw placed(error, model, file)
+    }
+  })()
   const row = {
     id: solid.id,
     fill,

@@ -3,6 +3,7 @@ import type { InputError, Progress } from '../errors'
 import { cross, dot, norm, scale, sub, type Vec3 } from '../geometry/vec3'
 import { type OpenStretch, openStretches } from './closed'
 import { fault } from './file'
+import { coverFinder } from './lying'
 import { type Mended, type MendedFace, planeOf } from './mend'
 
 /** Where a face stands in its file. */
@@ -60,24 +61,35 @@ export interface Closed {
   readonly repeated: number
   /** Groups of equal faces of which none stays. */
   readonly walls: number
+  /** Free edges: nothing is joined to the face there. */
   readonly open: readonly OpenStretch[]
+  /** Stretches with an odd number of faces that are not free. */
+  readonly lying: number
 }
 
 /**
  * Doubled faces are counted once. Where that leaves the model open, but taking both of each pair away does not, they were
  * walls between two parts: inside, and nothing to build.
+ *
+ * A stretch of edge with an odd number of faces is free when it has one face only and does not lie on other faces.
  */
 export const closeUp = ({ points, faces }: Mended, reach: number): Closed => {
   const distinct = distinctFaces(faces)
   const once = distinct.map((d) => d.face)
   const open = openStretches(points, once, reach)
-  const asOnce = { faces: once, repeated: faces.length - once.length, walls: 0, open }
-  if (open.length === 0 || asOnce.repeated === 0) return asOnce
+  const asOnce = { faces: once, repeated: faces.length - once.length, walls: 0, open, lying: 0 }
+  if (open.length === 0) return asOnce
   const odd = distinct.filter((d) => d.times % 2 === 1)
-  const unpaired = odd.map((d) => d.face)
-  if (unpaired.length === 0 || openStretches(points, unpaired, reach).length > 0) return asOnce
-  const repeated = odd.reduce((sum, d) => sum + d.times - 1, 0)
-  return { faces: unpaired, repeated, walls: once.length - unpaired.length, open: [] }
+  if (odd.length > 0 && odd.length < once.length) {
+    const unpaired = odd.map((d) => d.face)
+    if (openStretches(points, unpaired, reach).length === 0) {
+      const repeated = odd.reduce((sum, d) => sum + d.times - 1, 0)
+      return { faces: unpaired, repeated, walls: once.length - unpaired.length, open: [], lying: 0 }
+    }
+  }
+  const covered = coverFinder(points, once, reach)
+  const free = open.filter((s) => s.faces.length === 1 && !covered(s.ends, s.faces))
+  return { ...asOnce, open: free, lying: open.length - free.length }
 }
 
 /** The error for a model with gaps: the longest of them, with its ends and its faces. */
@@ -90,17 +102,13 @@ export const notClosed = (
 ): InputError => {
   const length = ({ ends }: OpenStretch): number => norm(sub(points[ends[0]]!, points[ends[1]]!))
   const worst = open.reduce((best, s) => (length(s) > length(best) ? s : best))
-  const owners = [...new Set(worst.faces)].map((f) => faces[f]!)
-  const named = owners.slice(0, 3).map(place)
-  const list = owners.length > 3 ? `${named.join(', ')} and others` : named.join(', ')
-  const count = worst.faces.length
+  const owner = faces[worst.faces[0]!]!
   const all = open.length === 1 ? 'It is the only such edge' : `There are ${open.length} such edges`
   return fault(
     file,
-    named[0]!,
+    place(owner),
     `not closed: the edge from ${point(points[worst.ends[0]]!)} to ${point(points[worst.ends[1]]!)} has ` +
-      `${count} ${count === 1 ? 'face' : 'faces'} (${list}), an even number is needed. ${all}; ` +
-      `${count === 1 ? 'add the face that is missing' : 'take the inner or doubled face away'} and export again.`,
+      `this face only. ${all}; add the face that is missing there, or take the loose one away.`,
   )
 }
 

@@ -1,7 +1,6 @@
 /**
- * Whether the faces close. Counted modulo two: at every stretch of edge an even number of faces ends. Then a ray that
- * misses the edges passes from one parity to the other at every face, so no face has the unbounded outside on both of its
- * sides, unless faces lie on one another.
+ * Where an odd number of faces ends. If that is nowhere, a ray that misses the edges passes from one parity to the other at
+ * every face, so no face has the unbounded outside on both of its sides, unless faces lie on one another.
  *
  * Edges are compared as stretches of a line, not as pairs of corners: a corner of one face in the middle of another's edge
  * is no gap.

@@ -1,5 +1,5 @@
 /** Models that a builder brings: OBJ, STL and PLY files, repaired where that is safe, refused with place and remedy where not. */
-import { noProgress, type Progress } from '../errors'
+import { InputError, noProgress, type Progress } from '../errors'
 import { type Closed, checkCycles, checkVolume, closeUp, notClosed, type PlaceOf, short, unflatness } from './check'
 import { checkFileSize, fault } from './file'
 import { greatestKindCount } from './kinds'
@@ -24,8 +24,7 @@ const nearEnough = 2e-5
 /**
  * Reads a model. Faces may cross, be stars, be triangulated, doubled or inside out.
  *
- * The model must be closed: at every stretch of edge an even number of faces ends. A rim that merely lies on another face
- * counts as open, since nothing tells whether a volume is closed off there or a loose wall stands in the open.
+ * The model must be closed: no stretch of edge may be free, that is, end one face only without lying on another one.
  *
  * @param bytes of the whole file; see `checkFileSize`
  * @throws InputError that names file, line or byte, element and remedy
@@ -40,6 +39,13 @@ export const readModel = (bytes: Uint8Array, fileName: string, progress: Progres
   if (raw.faces.length === 0)
     throw fault(file, '', `there are no faces in it; export the model with its faces, not only points or lines.`)
   return build(raw, file, progress)
+}
+
+/** A later stage knows a face by its number only: the same error with file and line or byte; other errors stay as they are. */
+export const placed = (error: unknown, { places }: Model, fileName: string): unknown => {
+  if (!(error instanceof InputError)) return error
+  const place = places[Number(/^face (\d+)$/.exec(error.place)?.[1] ?? 0) - 1]
+  return place === undefined ? error : fault(fileName.replace(/^.*[/\\]/, ''), place, error.message)
 }
 
 const readRaw = (bytes: Uint8Array, file: string, progress: Progress): RawModel => {
@@ -134,7 +140,7 @@ const checkLeft = ({ faces }: Mended, file: string): void => {
 }
 
 /** Repairs in plain sentences; corners that STL repeats by its nature are none. */
-const notesOn = (raw: RawModel, mended: Mended, { repeated, walls }: Closed, reach: number): string[] => {
+const notesOn = (raw: RawModel, mended: Mended, { repeated, walls, lying }: Closed, reach: number): string[] => {
   const notes: string[] = []
   const note = (n: number, one: string, many: string, what: string): void => {
     if (n > 0) notes.push(`${n} ${n === 1 ? `${one} was` : `${many} were`} ${what}.`)
@@ -157,6 +163,12 @@ const notesOn = (raw: RawModel, mended: Mended, { repeated, walls }: Closed, rea
     'inner wall, given by the parts on both sides of it,',
     'inner walls, given by the parts on both sides of them,',
     'taken out',
+  )
+  note(
+    lying,
+    'stretch of edge with an odd number of faces',
+    'stretches of edge with an odd number of faces',
+    'accepted, since other faces close the model there',
   )
   return notes
 }

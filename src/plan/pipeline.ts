@@ -3,7 +3,7 @@
  * same choices give the same plan to the last byte.
  */
 import { gluingOrder, renumber } from '../assembly'
-import { composeDocket, type PlanWithoutDocket } from '../docket'
+import { composeDocket, holdsOf, type PlanWithoutDocket } from '../docket'
 import { BrokenPromise, InputError, noProgress, type Progress } from '../errors'
 import { convexHull, fittingAngle } from '../geometry/hull'
 import type { Ring2 } from '../geometry/vec2'
@@ -15,6 +15,7 @@ import { assignTabs } from '../pieces/tabs'
 import type { Piece, Tab } from '../pieces/types'
 import { cardName, nest, papers } from '../sheets'
 import { computeSkin, type Skin, validateSkin } from '../skin'
+import { refuseLooseWalls } from '../skin/loose-walls'
 import { buildSolid, type Solid } from '../solids'
 import { checkChoices } from './choices'
 import { edgeForHeight, planCreases, planModel, planPanels } from './model'
@@ -58,6 +59,7 @@ export const planSolid = (
 
   const skinKey = [solid.id, solid.hand, choices.fill]
   const skin = cache.get('skin', skinKey, () => sound(computeSkin(solid, choices.fill, progress)))
+  if (solid.family === 'own') refuseLooseWalls(solid, skin)
   const netKey = [...skinKey, edgeMm, fit, perKind]
   const glued = cache.get('pieces', netKey, () => {
     ensurePanelsFit(skin, edgeMm, choices.heightMm, fit)
@@ -120,7 +122,10 @@ export const planSolid = (
     ),
   }
   progress('checks', 0)
-  const docket = composeDocket(plan, skin.bodies, skin.contacts.length, [])
+  const docket = {
+    ...composeDocket(plan, skin.bodies, skin.contacts.length, []),
+    ...holdsOf(skin, plan.creases, plan.pieces, edgeMm),
+  }
   const checks = validatePlan({ ...plan, docket })
   progress('checks', 1)
   return { ...plan, docket: { ...docket, checks } }
