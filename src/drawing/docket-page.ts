@@ -1,5 +1,5 @@
 /** The first page: the docket, with what each figure means for the builder, the plan's own checks, and cautions. */
-import { cautions, cautionsEnd, toolForWidth } from '../docket/words'
+import { cautions, cautionsEnd, holdWords, partWords, toolForWidth } from '../docket/words'
 import type { Plan, PlanChoices } from '../plan/types'
 import { handWords, sideWords } from './furniture'
 import { textWidthMm, wrapText } from './text-width'
@@ -41,8 +41,19 @@ export const docketRows = (plan: Plan, choices: PlanChoices): [string, string, s
     ['All work', duration(d.hours.total), 'at an even pace, with knife and ruler'],
     ['Narrowest panel', `${d.tightest.widthMm.toFixed(1)} mm`, toolForWidth(d.tightest.widthMm)],
     ['Sharpest inner angle', `${d.sharpestInnerAngle.toFixed(1)}°`, angleWords(d.sharpestInnerAngle)],
-    ['Bodies', `${d.bodies}`, bodyWords(d.bodies, d.lineContacts)],
+    ['Bodies', `${d.bodies}`, holdWords(d)],
+    ...partRows(plan),
   ]
+}
+
+/** The page has room for a few parts; the steps' notes tell of all. */
+const partRows = (plan: Plan): [string, string, string][] => {
+  const words = partWords(plan)
+  const rows = words
+    .slice(0, 3)
+    .map((text, i): [string, string, string] => [i === 0 ? 'Separate parts' : '', `${i + 1}`, text])
+  if (words.length > 3) rows.push(['', `+ ${words.length - 3}`, 'more parts: each begins at a step with a note'])
+  return rows
 }
 
 const seamWords = (bare: number): string =>
@@ -55,11 +66,6 @@ const angleWords = (degrees: number): string =>
     : degrees >= 10
       ? 'tight: use thin card'
       : 'too tight for fingers: very thin card'
-
-const bodyWords = (bodies: number, contacts: number): string =>
-  contacts === 0
-    ? 'nothing is held only along a line'
-    : `${contacts} ${contacts === 1 ? 'stretch is' : 'stretches are'} held only along a line${bodies > 1 ? ', glue them with care' : ''}`
 
 /** Docket, checks and cautions on one page of the sheets' size. */
 export const drawDocketPage = (plan: Plan, choices: PlanChoices): DrawingPage => {
@@ -104,7 +110,10 @@ export const drawDocketPage = (plan: Plan, choices: PlanChoices): DrawingPage =>
   for (const [name, value, meaning] of docketRows(plan, choices)) {
     write(name, left, y, 9.5)
     write(value, valueColumn, y, 9.5, { bold: true })
-    write(meaning, meaningColumn, y, 8.5)
+    wrapText(meaning, 8.5, widthMm - left - meaningColumn).forEach((row, i) => {
+      if (i > 0) y -= 3.8
+      write(row, meaningColumn, y, 8.5)
+    })
     y -= rowMm
   }
   y -= 1

@@ -128,6 +128,17 @@ export const docketAgrees = ({ plan, creases, panels }: PlanIndex): PlanCheck =>
     .filter(({ contact }) => contact === 'line')
     .map(({ ends }) => ends.map(String).sort().join(' '))
   say('line contacts', docket.lineContacts, new Set(lines).size)
+  if (docket.contacts)
+    say(
+      'line contacts listed',
+      docket.contacts.filter((c) => lines.includes(c.ends.map(String).sort().join(' '))).length,
+      new Set(lines).size,
+    )
+  if (docket.parts && docket.parts.length > 0) {
+    const listed = docket.parts.flatMap((part) => part.pieces)
+    say('pieces of separate parts', listed.length, plan.pieces.length)
+    say('pieces of separate parts, each once', new Set(listed).size, plan.pieces.length)
+  }
   const card = plan.sheets.reduce((sum, { widthMm, heightMm }) => sum + widthMm * heightMm, 0)
   say('card area', docket.cardAreaMm2, card, 1e-6 * card)
   const net =

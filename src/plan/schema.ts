@@ -148,13 +148,36 @@ const step = object('One step at the bench.', {
   note: { type: 'string', description: 'A word to the builder; may be empty.' },
 })
 
-const docket = object('The summary.', {
+const contact = object('A place where bodies touch without a crease on the surface.', {
+  kind: choice('Along a stretch of line, or at one point.', 'line', 'point'),
+  ends: list('The two ends of the stretch, or the one point.', ref('point3'), 1),
+  lengthMm: length('Of the stretch.'),
+  bodies: list('Bodies that touch there.', ref('id'), 1),
+  held: choice(
+    'What holds there: the skin folds or is glued across, a strip or a gusset is put in, or nothing.',
+    'fold',
+    'seam',
+    'strip',
+    'gusset',
+    'apart',
+  ),
+})
+
+const part = object('A part of the model that no crease joins to the rest.', {
+  bodies: list('Its bodies.', ref('id'), 1),
+  pieces: list('Its pieces.', ref('id'), 1),
+  joint: choice('What joins it to the parts before it.', 'first', 'strip', 'gusset', 'apart'),
+})
+
+const docketFields: Record<string, Schema> = {
   panels: count('Panels.'),
   pieces: count('Pieces.'),
   templates: count('Different templates.'),
   seams: count('Creases that are glued.'),
   bodies: count('Closed parts of the skin, every line contact paired through the inside.'),
   lineContacts: count('Stretches that are held only along a line.'),
+  contacts: list('Where bodies touch, with what holds there.', contact),
+  parts: list('What is built separately; empty when the model is one part.', part),
   sheets: count('Sheets.'),
   cardAreaMm2: length('All sheets, margins included.'),
   netAreaMm2: length('Panels and tabs.'),
@@ -181,7 +204,9 @@ const docket = object('The summary.', {
       detail: { type: 'string', description: 'What was found.' },
     }),
   ),
-})
+}
+
+const docket = object('The summary.', docketFields, ['contacts', 'parts'])
 
 export const planSchema: Schema = {
   $schema: 'https://json-schema.org/draft/2020-12/schema',

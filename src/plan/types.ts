@@ -95,6 +95,26 @@ export interface PlanCheck {
   ok: boolean
   detail: string
 }
+/** A place where bodies touch without a crease on the surface. */
+export interface PlanContact {
+  kind: 'line' | 'point'
+  /** The two ends of the stretch, or the one point. */
+  ends: Point3[]
+  lengthMm: number
+  bodies: number[]
+  /**
+   * What holds there: a fold or a glued seam that carries the skin across, a strip or a gusset to be put in, or nothing
+   * (each body closes by itself and is held elsewhere).
+   */
+  held: 'fold' | 'seam' | 'strip' | 'gusset' | 'apart'
+}
+/** A part of the model that no crease joins to the rest. */
+export interface PlanPart {
+  bodies: number[]
+  pieces: number[]
+  /** What joins it to the parts before it; `apart`: it touches none of them. */
+  joint: 'first' | 'strip' | 'gusset' | 'apart'
+}
 export interface PlanDocket {
   panels: number
   pieces: number
@@ -103,6 +123,10 @@ export interface PlanDocket {
   bodies: number
   /** Stretches that are held only along a line. */
   lineContacts: number
+  /** Where bodies touch, with what holds there; missing in plans of before. */
+  contacts?: PlanContact[]
+  /** What is built separately; empty when the model is one part, missing in plans of before. */
+  parts?: PlanPart[]
   sheets: number
   /** All sheets, margins included. */
   cardAreaMm2: number
