@@ -99,6 +99,10 @@ const spread = (components: readonly Component[], group: readonly Mat3[]): RawSo
 const coplanar = 'Faces of different components lie in one plane, in 20 pairs.'
 const shared = 'Every vertex is shared by two components.'
 
+/**
+ * The right-handed five tetrahedra: seen from outside, every triangle is turned counter-clockwise, by arctan √3(√5 − 2) or
+ * about 22.24°, out of the place where its corners would point to the nearest fivefold axes.
+ */
 export const compoundNames: readonly CompoundName[] = [
   {
     name: 'compound of two tetrahedra',
