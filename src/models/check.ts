@@ -71,23 +71,26 @@ export interface Closed {
  * Doubled faces are counted once. Where that leaves the model open, but taking both of each pair away does not, they were
  * walls between two parts: inside, and nothing to build.
  *
+ * @param beat called often
+ *
  * A stretch of edge with an odd number of faces is free when it has one face only and does not lie on other faces.
  */
-export const closeUp = ({ points, faces }: Mended, reach: number): Closed => {
+export const closeUp = ({ points, faces }: Mended, reach: number, beat: () => void): Closed => {
   const distinct = distinctFaces(faces)
+  beat()
   const once = distinct.map((d) => d.face)
-  const open = openStretches(points, once, reach)
+  const open = openStretches(points, once, reach, beat)
   const asOnce = { faces: once, repeated: faces.length - once.length, walls: 0, open, lying: 0 }
   if (open.length === 0) return asOnce
   const odd = distinct.filter((d) => d.times % 2 === 1)
   if (odd.length > 0 && odd.length < once.length) {
     const unpaired = odd.map((d) => d.face)
-    if (openStretches(points, unpaired, reach).length === 0) {
+    if (openStretches(points, unpaired, reach, beat).length === 0) {
       const repeated = odd.reduce((sum, d) => sum + d.times - 1, 0)
       return { faces: unpaired, repeated, walls: once.length - unpaired.length, open: [], lying: 0 }
     }
   }
-  const covered = coverFinder(points, once, reach)
+  const covered = coverFinder(points, once, reach, beat)
   const free = open.filter((s) => s.faces.length === 1 && !covered(s.ends, s.faces))
   return { ...asOnce, open: free, lying: open.length - free.length }
 }

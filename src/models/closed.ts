@@ -17,21 +17,30 @@ export interface OpenStretch {
   readonly faces: readonly number[]
 }
 
-/** Candidate corners looked at; a soup of unconnected long triangles would cost the square of its size. */
-const workBound = 30_000_000
+/** Cells and corners looked at; a soup of unconnected long triangles would cost the square of its size. */
+const workBound = 8_000_000
 
 /**
  * @param reach how far a corner may lie from an edge and still divide it
+ * @param beat called often
  * @returns stretches with an odd number of faces
  */
-export const openStretches = (points: readonly Vec3[], faces: readonly Cycled[], reach: number): OpenStretch[] => {
+export const openStretches = (
+  points: readonly Vec3[],
+  faces: readonly Cycled[],
+  reach: number,
+  beat: () => void,
+): OpenStretch[] => {
+  beat()
   const odd = oddStretches(
     faces.flatMap(({ cycle }, face) => cycle.map((a, i) => ({ a, b: cycle[(i + 1) % cycle.length]!, faces: [face] }))),
     points.length,
   )
+  beat()
   if (odd.length === 0) return []
   const divide = dividerOf(points, odd, reach)
-  const parts = odd.flatMap((s) => {
+  const parts = odd.flatMap((s, i) => {
+    if ((i & 127) === 0) beat()
     const stops = [s.ends[0], ...divide(s.ends), s.ends[1]]
     return stops.slice(1).map((b, i) => ({ a: stops[i]!, b, faces: s.faces }))
   })
@@ -90,6 +99,7 @@ const dividerOf = (
       for (let i = at[0] - 1; i <= at[0] + 1; i++)
         for (let j = at[1] - 1; j <= at[1] + 1; j++)
           for (let k = at[2] - 1; k <= at[2] + 1; k++) {
+            if (++work > workBound) return []
             const key = keyOf(i, j, k)
             if (seen.has(key)) continue
             seen.add(key)

@@ -80,22 +80,22 @@ const extentOf = (raw: RawModel): { greatest: number; size: number } => {
 const build = (raw: RawModel, file: string, progress: Progress): Model => {
   const place: PlaceOf = ({ at, index }) => (raw.binary ? `face ${index + 1}, byte ${at}` : `line ${at}`)
   const { greatest, size } = extentOf(raw)
-  if (!(size > 1e-30)) throw fault(file, '', 'all corners lie at one point; scale the model up and export it again.')
+  if (!(size > 1e-30)) throw fault(file, '', 'all corners lie at one point; the model has no size, export it again.')
   const error = Math.min(roundingOf(raw, greatest, size), flatEnough * size)
 
   // Single-precision programs compute the same corner twice with a few last places between; text only rounds it.
   const reach = Math.min((raw.numbers === 'text' ? 3 : 8) * error, flatEnough * size)
   const wide = Math.max(reach, nearEnough * size)
-  let mended = mend(raw, reach, size)
+  let mended = mend(raw, reach, size, () => progress('model', 0.5))
   progress('model', 0.6)
   checkLeft(mended, file)
   let used = reach
-  let closed = closeUp(mended, reach)
+  let closed = closeUp(mended, reach, () => progress('model', 0.6))
   if (closed.open.length > 0 && wide > reach) {
     progress('model', 0.65)
-    const again = mend(raw, wide, size)
+    const again = mend(raw, wide, size, () => progress('model', 0.65))
     if (again.faces.length > 0) {
-      const better = closeUp(again, wide)
+      const better = closeUp(again, wide, () => progress('model', 0.65))
       if (better.open.length === 0) {
         mended = again
         closed = better

@@ -23,12 +23,14 @@ const workBound = 40_000_000
 
 /**
  * @param reach how far a stretch may be from a face and still lie on it
+ * @param beat called often
  * @returns for a stretch with these ends and these faces ending at it: whether other faces cover all of it
  */
 export const coverFinder = (
   points: readonly Vec3[],
   faces: readonly Cycled[],
   reach: number,
+  beat: () => void,
 ): ((ends: readonly [number, number], own: readonly number[]) => boolean) => {
   const prepared = faces.map(({ cycle }): Prepared => {
     const corners = cycle.map((v) => points[v]!)
@@ -44,6 +46,7 @@ export const coverFinder = (
     const b = points[j]!
     const length = distance(a, b)
     const covered: (readonly [number, number])[] = []
+    beat()
     work += prepared.length
     if (work > workBound) return false
     prepared.forEach((face, f) => {

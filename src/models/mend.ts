@@ -21,8 +21,12 @@ export interface Mended {
   readonly unused: number
 }
 
-/** @param reach corners no farther apart are one, in file units */
-export const mend = (raw: RawModel, reach: number, size: number): Mended => {
+/**
+ * @param reach corners no farther apart are one, in file units
+ * @param size radius of the model, in file units
+ * @param beat called often
+ */
+export const mend = (raw: RawModel, reach: number, size: number, beat: () => void): Mended => {
   const c = raw.coordinates
   const grid = new SnapGrid(reach, reach, Math.max(4 * reach, size / 64))
   const given = new Int32Array(c.length / 3).fill(-1)
@@ -47,6 +51,7 @@ export const mend = (raw: RawModel, reach: number, size: number): Mended => {
   let flatFaces = 0
   const faces: MendedFace[] = []
   raw.faces.forEach((face, index) => {
+    if ((index & 1023) === 0) beat()
     const cycle = face.cycle.map(pointOf)
     const kept = withoutShortEdges(cycle)
     const gone = kept.length < 3 || isThin(kept.map(at), reach)
