@@ -17,6 +17,25 @@ interface Searchable {
   readonly facts: () => SolidFacts
 }
 
+/** Spellings of the catalogue's own configurations, which every query by configuration asks for again. */
+const spelt = new Map<string, string | null>()
+const knownConfiguration = (text: string): string | null => {
+  let found = spelt.get(text)
+  if (found === undefined) spelt.set(text, (found = canonicalConfiguration(text)))
+  return found
+}
+
+/** Where a part begins in a plain name, or −1. A number is no part of a longer number: 7 3 is not in 17 3. */
+const placeOf = (name: string, part: string): number => {
+  const digit = (c: string | undefined): boolean => c !== undefined && c >= '0' && c <= '9'
+  for (let i = name.indexOf(part); i >= 0; i = name.indexOf(part, i + 1)) {
+    const end = i + part.length
+    const cutsNumber = (digit(name[i - 1]) && digit(name[i])) || (digit(name[end - 1]) && digit(name[end]))
+    if (!cutsNumber) return i
+  }
+  return -1
+}
+
 /** Entries that match the query; best matches (whole name, whole word) first, then in the order of the list. */
 export const search = <T extends Searchable>(all: readonly T[], query: string): T[] => {
   const text = query.trim()
@@ -28,15 +47,15 @@ export const search = <T extends Searchable>(all: readonly T[], query: string): 
   }
   const configuration = canonicalConfiguration(text)
   if (configuration !== null)
-    return all.filter((e) => canonicalConfiguration(e.facts().vertexConfiguration) === configuration)
+    return all.filter((e) => knownConfiguration(e.facts().vertexConfiguration) === configuration)
   const wanted = plain(text)
   const words = wanted.split(' ')
   const score = (e: T): number => {
     const name = plain(e.name)
     if (name === wanted) return 0
-    if (name.startsWith(wanted)) return 1
-    if (name.includes(wanted)) return 2
-    return words.every((w) => name.includes(w)) ? 3 : 4
+    const where = placeOf(name, wanted)
+    if (where >= 0) return where === 0 ? 1 : 2
+    return words.every((w) => placeOf(name, w) >= 0) ? 3 : 4
   }
   return all
     .map((e, place) => ({ e, place, score: score(e) }))
