@@ -116,7 +116,7 @@ const build = (raw: RawModel, file: string, progress: Progress): Model => {
   const notes = [
     ...raw.notes,
     ...notesOn(raw, mended, closed, used),
-    ...(off > 3 * error ? [`Faces up to ${short(off)} off their plane were taken as flat.`] : []),
+    ...(off > Math.max(3 * error, used) ? [`Faces up to ${short(off)} off their plane were taken as flat.`] : []),
     ...(made.tooManyKinds > 0
       ? [`${made.tooManyKinds} materials or colours are more than ${greatestKindCount}; all faces are of one card.`]
       : []),
