@@ -13,7 +13,8 @@ describe('batch list', () => {
     )
     const counts = new Map<unknown, number>()
     for (const { family } of facts) counts.set(family, (counts.get(family) ?? 0) + 1)
-    // φ(3) + … + φ(24) = 178, half of it {n/d}; 75 − 9 regular − 10 with faces through the centre; Regular Polytopes (1948).
+    // By hand: φ(3) + … + φ(24) = 178, half of that {n/d}, one of each left out, 29 crossed; duals 75 − 9 regular − 10 with
+    // faces through the centre.
     expect([...counts]).toEqual([
       ['uniform', 75],
       ['prism', 88],
