@@ -43,6 +43,7 @@ export const docketRows = (plan: Plan, choices: PlanChoices): [string, string, s
     ['Sharpest inner angle', `${d.sharpestInnerAngle.toFixed(1)}°`, angleWords(d.sharpestInnerAngle)],
     ['Bodies', `${d.bodies}`, holdWords(d)],
     ...partRows(plan),
+    ...closedRow(plan),
   ]
 }
 
@@ -55,6 +56,17 @@ const partRows = (plan: Plan): [string, string, string][] => {
   if (words.length > 3) rows.push(['', `+ ${words.length - 3}`, 'more parts: each begins at a step with a note'])
   return rows
 }
+
+const closedRow = ({ docket }: Plan): [string, string, string][] =>
+  docket.closed
+    ? [
+        [
+          'Closed up',
+          `${docket.closed.stretches} stretches`,
+          `shorter than ${docket.closed.belowMm} mm; no corner moved more than ${docket.closed.movedMm.toFixed(2)} mm, panels flat within ${docket.closed.offPlaneMm.toFixed(2)} mm`,
+        ],
+      ]
+    : []
 
 const seamWords = (bare: number): string =>
   bare === 0 ? 'all with a tab' : `${bare} without a tab: glue bare edges or use a strip`

@@ -134,9 +134,10 @@ export const creasesCover = ({ plan, panels, near }: PlanIndex): PlanCheck => {
  */
 export const anglesAgree = ({ plan, panels }: PlanIndex): PlanCheck => {
   const faults: string[] = []
-  // Degrees; normals may be written to six places.
-  const slack = 3e-4
+  const loose = plan.docket.closed?.offPlaneMm ?? 0
   for (const { id, panels: sides, ends, innerAngle } of plan.creases) {
+    // Degrees; normals may be written to six places, and an edge a little off its panels' planes tilts against them.
+    const slack = 3e-4 + (60 * loose) / distance(...ends)
     const [first, second] = [panels.get(sides[0])!.normal, panels.get(sides[1])!.normal]
     const turn = cross(first, second)
     const between = (Math.atan2(norm(turn), dot(first, second)) * 180) / Math.PI

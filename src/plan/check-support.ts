@@ -18,7 +18,8 @@ export interface PlanIndex {
   readonly laid: ReadonlyMap<number, Laid>
   /** By crease id, with the piece that carries it. */
   readonly tabs: ReadonlyMap<number, readonly { readonly piece: PlanPiece; readonly tab: PlanPiece['tabs'][number] }[]>
-  /** Two points closer than this, in mm, are the same point: a millionth of the model, far below a knife's width. */
+  /** Two points closer than this, in mm, are the same point: a millionth of the model, far below a knife's width.
+   * Where slivers were closed up, panels are flat within what that moved. */
   readonly near: number
 }
 
@@ -40,7 +41,7 @@ export const indexPlan = (plan: Plan): PlanIndex => {
     pieces: new Map(plan.pieces.map((piece) => [piece.id, piece])),
     laid,
     tabs,
-    near: 1e-6 * plan.model.heightMm,
+    near: 1e-6 * plan.model.heightMm + (plan.docket.closed?.offPlaneMm ?? 0),
   }
 }
 

@@ -4,6 +4,9 @@ import type { PlanChoices } from './types'
 
 export const leastHeightMm = 10
 export const greatestHeightMm = 2000
+/** What card work can hide: a stretch below this is proposed to be closed up (common practice, no source). */
+export const usualCloseMm = 0.3
+export const greatestCloseMm = 2
 
 export const usualChoices: Omit<PlanChoices, 'solid'> = {
   hand: 'right',
@@ -19,7 +22,7 @@ export const usualChoices: Omit<PlanChoices, 'solid'> = {
 
 /** @throws InputError that names the choice at fault and what would be right */
 export const checkChoices = (choices: PlanChoices): void => {
-  const { heightMm, marginMm, gapMm, grammage } = choices
+  const { heightMm, marginMm, gapMm, grammage, closeBelowMm = 0 } = choices
   if (!Number.isFinite(heightMm) || heightMm < leastHeightMm || heightMm > greatestHeightMm)
     throw new InputError(
       `Height ${heightMm} mm is out of range: choose ${leastHeightMm} to ${greatestHeightMm} mm.`,
@@ -29,6 +32,11 @@ export const checkChoices = (choices: PlanChoices): void => {
     throw new InputError(`Margin ${marginMm} mm is out of range: choose 4 to 40 mm.`, 'marginMm')
   if (!Number.isFinite(gapMm) || gapMm < 0 || gapMm > 20)
     throw new InputError(`Gap ${gapMm} mm is out of range: choose 0 to 20 mm.`, 'gapMm')
+  if (!Number.isFinite(closeBelowMm) || closeBelowMm < 0 || closeBelowMm > greatestCloseMm)
+    throw new InputError(
+      `Closing up below ${closeBelowMm} mm is out of range: choose 0 (none) to ${greatestCloseMm} mm.`,
+      'closeBelowMm',
+    )
   if (!Number.isFinite(grammage) || grammage < 60 || grammage > 400)
     throw new InputError(`Card weight ${grammage} g/m² is out of range: choose 60 to 400 g/m².`, 'grammage')
 }

@@ -1,5 +1,12 @@
 /** From choices to a plan, and the plan file. */
-export { checkChoices, greatestHeightMm, leastHeightMm, usualChoices } from './choices'
+export {
+  checkChoices,
+  greatestCloseMm,
+  greatestHeightMm,
+  leastHeightMm,
+  usualChoices,
+  usualCloseMm,
+} from './choices'
 export { makePlan, planSolid } from './pipeline'
 export { planSchema } from './schema'
 export { StageCache } from './stages'

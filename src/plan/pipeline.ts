@@ -14,7 +14,7 @@ import type { FitRectangle } from '../pieces/patch'
 import { assignTabs } from '../pieces/tabs'
 import type { Piece, Tab } from '../pieces/types'
 import { cardName, nest, papers } from '../sheets'
-import { computeSkin, type Skin, validateSkin } from '../skin'
+import { type Closed, closeSlivers, computeSkin, type Skin, validateSkin } from '../skin'
 import { refuseLooseWalls } from '../skin/loose-walls'
 import { buildSolid, type Solid } from '../solids'
 import { checkChoices } from './choices'
@@ -22,7 +22,7 @@ import { edgeForHeight, planCreases, planModel, planPanels } from './model'
 import { round6 } from './round'
 import { seamLabel } from './seam-labels'
 import { StageCache } from './stages'
-import type { Plan, PlanChoices, PlanPiece, PlanSheet, PlanStep, Point2 } from './types'
+import type { Plan, PlanChoices, PlanClosed, PlanPiece, PlanSheet, PlanStep, Point2 } from './types'
 import { validatePlan } from './validate'
 
 /**
@@ -57,10 +57,16 @@ export const planSolid = (
   const edgeMm = edgeForHeight(solid, choices.heightMm)
   const perKind = choices.colours === 'kind'
 
-  const skinKey = [solid.id, solid.hand, choices.fill]
-  const skin = cache.get('skin', skinKey, () => sound(computeSkin(solid, choices.fill, progress)))
-  if (solid.family === 'own') refuseLooseWalls(solid, skin)
-  const netKey = [...skinKey, edgeMm, fit, perKind]
+  // A builder's model keeps its name when it is changed and read again, so its shape belongs to the key.
+  const skinKey = [solid.id, solid.hand, choices.fill, ...(solid.family === 'own' ? [shapeKey(solid)] : [])]
+  const whole = cache.get('skin', skinKey, () => sound(computeSkin(solid, choices.fill, progress)))
+  if (solid.family === 'own') refuseLooseWalls(solid, whole)
+  const closeBelowMm = choices.closeBelowMm ?? 0
+  const closed = cache.get('closed', [...skinKey, edgeMm, closeBelowMm], () =>
+    closeSlivers(whole, closeBelowMm / edgeMm),
+  )
+  const { skin } = closed
+  const netKey = [...skinKey, edgeMm, closeBelowMm, fit, perKind]
   const glued = cache.get('pieces', netKey, () => {
     ensurePanelsFit(skin, edgeMm, choices.heightMm, fit)
     const cut = cutIntoPieces(skin, { edgeMm, fit, perKind }, progress)
@@ -125,10 +131,27 @@ export const planSolid = (
   const docket = {
     ...composeDocket(plan, skin.bodies, skin.contacts.length, []),
     ...holdsOf(skin, plan.creases, plan.pieces, edgeMm),
+    ...(closed.stretches > 0 ? { closed: closedInMm(closed, closeBelowMm, edgeMm) } : {}),
   }
   const checks = validatePlan({ ...plan, docket })
   progress('checks', 1)
   return { ...plan, docket: { ...docket, checks } }
+}
+
+const closedInMm = (closed: Closed, belowMm: number, edgeMm: number): PlanClosed => ({
+  belowMm,
+  stretches: closed.stretches,
+  panels: closed.panels,
+  movedMm: round6(closed.moved * edgeMm),
+  offPlaneMm: round6(closed.skin.slack * edgeMm),
+})
+
+/** A number for the shape of a model (FNV-1a over coordinates and cycles). */
+const shapeKey = (solid: Solid): number => {
+  let hash = 0x811c9dc5
+  const numbers = new Float64Array([...solid.vertices.flat(), ...solid.faces.flatMap((f) => [f.kind, -1, ...f.cycle])])
+  for (const byte of new Uint8Array(numbers.buffer)) hash = Math.imul(hash ^ byte, 0x01000193)
+  return hash >>> 0
 }
 
 /** A skin that does not keep its promises must never reach the builder's card. */

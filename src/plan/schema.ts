@@ -178,6 +178,13 @@ const docketFields: Record<string, Schema> = {
   lineContacts: count('Stretches that are held only along a line.'),
   contacts: list('Where bodies touch, with what holds there.', contact),
   parts: list('What is built separately; empty when the model is one part.', part),
+  closed: object('Stretches too short to cut or glue that were drawn together.', {
+    belowMm: size('Shorter ones were closed up.'),
+    stretches: count('How many.'),
+    panels: count('Panels that went with them.'),
+    movedMm: length('How far the farthest point moved.'),
+    offPlaneMm: length('How far points may be off the planes of their panels since.'),
+  }),
   sheets: count('Sheets.'),
   cardAreaMm2: length('All sheets, margins included.'),
   netAreaMm2: length('Panels and tabs.'),
@@ -206,7 +213,7 @@ const docketFields: Record<string, Schema> = {
   ),
 }
 
-const docket = object('The summary.', docketFields, ['contacts', 'parts'])
+const docket = object('The summary.', docketFields, ['contacts', 'parts', 'closed'])
 
 export const planSchema: Schema = {
   $schema: 'https://json-schema.org/draft/2020-12/schema',

@@ -115,6 +115,17 @@ export interface PlanPart {
   /** What joins it to the parts before it; `apart`: it touches none of them. */
   joint: 'first' | 'strip' | 'gusset' | 'apart'
 }
+/** Slivers closed up: stretches too short to cut or glue, drawn together within the card's tolerance. */
+export interface PlanClosed {
+  belowMm: number
+  stretches: number
+  /** Panels that went with them. */
+  panels: number
+  /** How far the farthest point moved. */
+  movedMm: number
+  /** How far points may be off the planes of their panels since. */
+  offPlaneMm: number
+}
 export interface PlanDocket {
   panels: number
   pieces: number
@@ -127,6 +138,8 @@ export interface PlanDocket {
   contacts?: PlanContact[]
   /** What is built separately; empty when the model is one part, missing in plans of before. */
   parts?: PlanPart[]
+  /** What was closed up, if anything; missing when every stretch is as the solid has it. */
+  closed?: PlanClosed
   sheets: number
   /** All sheets, margins included. */
   cardAreaMm2: number
@@ -170,4 +183,6 @@ export interface PlanChoices {
   /** Between outlines on a sheet. */
   gapMm: number
   grammage: number
+  /** Stretches shorter than this are closed up, mm; 0 or missing: none. */
+  closeBelowMm?: number
 }
