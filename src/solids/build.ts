@@ -67,25 +67,17 @@ const withOrbits = (
   const keyOf = (kind: number, cycle: readonly number[]): string =>
     `${kind}:${[...cycle].sort((a, b) => a - b).join(' ')}`
   const faceAt = new Map(faces.map((f, i) => [keyOf(f.kind, f.cycle), i]))
-  const images = rotations.map((g) =>
-    vertices.map((p) => {
-      const [x, y, z] = apply(g, p)
-      return grid.find(x, y, z)
-    }),
-  )
   const orbit = faces.map(() => -1)
   let count = 0
-  faces.forEach((f, i) => {
+  faces.forEach(({ kind, cycle }, i) => {
     if (orbit[i] !== -1) return
-    for (const image of images)
-      orbit[
-        faceAt.get(
-          keyOf(
-            f.kind,
-            f.cycle.map((v) => image[v]!),
-          ),
-        )!
-      ] = count
+    for (const g of rotations) {
+      const image = cycle.map((v) => {
+        const [x, y, z] = apply(g, vertices[v]!)
+        return grid.find(x, y, z)
+      })
+      orbit[faceAt.get(keyOf(kind, image))!] = count
+    }
     count++
   })
   return faces.map((f, i) => ({ ...f, orbit: orbit[i]! }))

@@ -89,6 +89,7 @@ export const snubPoint = (triangle: SchwarzTriangle): Vec3 => {
   const dual = [cross(corners[1], corners[2]), cross(corners[2], corners[0]), cross(corners[0], corners[1])].map((x) =>
     scale(x, 1 / volume),
   ) as [Vec3, Vec3, Vec3]
+  const gram = dual.flatMap((a) => dual.map((b) => dot(a, b)))
   const pointAt = (c: number, signs: readonly number[]): Vec3 => {
     let v: Vec3 = [0, 0, 0]
     for (let i = 0; i < 3; i++) v = add(v, scale(dual[i]!, signs[i]! * Math.sqrt(Math.max(0, 1 - c / sines[i]!))))
@@ -100,10 +101,20 @@ export const snubPoint = (triangle: SchwarzTriangle): Vec3 => {
   for (let mask = 0; mask < 8; mask++) {
     const signs = [1, 2, 4].map((bit) => (mask & bit ? -1 : 1))
     const off = (c: number): number => norm(pointAt(c, signs)) - 1
+    // The search looks at the sign alone, thousands of times: |v|² − 1 from the Gram matrix, without vectors.
+    const tooLong = (c: number): boolean => {
+      let square = 0
+      for (let i = 0; i < 3; i++)
+        for (let j = 0; j < 3; j++) {
+          const product = Math.max(0, 1 - c / sines[i]!) * Math.max(0, 1 - c / sines[j]!)
+          square += signs[i]! * signs[j]! * Math.sqrt(product) * gram[3 * i + j]!
+        }
+      return square > 1
+    }
     for (let k = 0; k < steps; k++) {
       let low = (greatest * (k + 1e-6)) / steps
       let high = (greatest * (k + 1)) / steps
-      if (off(low) > 0 === off(high) > 0) continue
+      if (tooLong(low) === tooLong(high)) continue
       for (let i = 0; i < 80; i++) {
         const middle = (low + high) / 2
         if (off(middle) > 0 === off(low) > 0) low = middle
