@@ -2,7 +2,7 @@
  * The skin of a solid: what can be touched from outside, as panels and creases.
  */
 import { BrokenPromise, InputError, noProgress, type Progress } from '../errors'
-import { distance, dot, norm, type Vec3 } from '../geometry/vec3'
+import { distance, dot, norm, scale, type Vec3 } from '../geometry/vec3'
 import type { FillRule, Solid } from '../solids/types'
 import { areaVector } from './area'
 import { type Arrangement, arrange } from './arrangement'
@@ -33,7 +33,13 @@ export { validateSkin } from './validate'
  * @throws Cancelled out of `progress`
  */
 export const computeSkin = (solid: Solid, fill: FillRule = 'nonzero', progress: Progress = noProgress): Skin => {
-  if (solid.precision === undefined) return skinWithin(solid, fill, catalogueTolerance, progress)
+  if (solid.precision === undefined) {
+    const edge = meanEdge(solid)
+    // The bounds are meant for edges of about one unit.
+    return Math.abs(edge - 1) < 1e-6
+      ? skinWithin(solid, fill, catalogueTolerance, progress)
+      : scaled(skinWithin(resized(solid, 1 / edge), fill, catalogueTolerance, progress), edge)
+  }
   let fault: BrokenPromise | null = null
   for (const tolerance of roughTolerances(solid.precision)) {
     try {
@@ -52,6 +58,36 @@ export const computeSkin = (solid: Solid, fill: FillRule = 'nonzero', progress: 
     'model',
   )
 }
+
+const meanEdge = ({ vertices, faces }: Solid): number => {
+  let sum = 0
+  let count = 0
+  for (const { cycle } of faces)
+    cycle.forEach((v, i) => {
+      sum += distance(vertices[v]!, vertices[cycle[(i + 1) % cycle.length]!]!)
+      count++
+    })
+  return sum / count
+}
+
+const resized = (solid: Solid, factor: number): Solid => ({
+  ...solid,
+  vertices: solid.vertices.map((v) => scale(v, factor)),
+})
+
+/** The same skin in a unit `factor` times as fine. */
+const scaled = (skin: Skin, factor: number): Skin => ({
+  ...skin,
+  slack: skin.slack * factor,
+  points: skin.points.map((p) => scale(p, factor)),
+  panels: skin.panels.map((p) => ({ ...p, area: p.area * factor ** 2 })),
+  creases: skin.creases.map((c) => ({ ...c, length: c.length * factor })),
+  contacts: skin.contacts.map((c) => ({ ...c, length: c.length * factor })),
+  touches: skin.touches.map((t) => ({ ...t, ends: t.ends.map((p) => scale(p, factor)), length: t.length * factor })),
+  lineContactLength: skin.lineContactLength * factor,
+  area: skin.area * factor ** 2,
+  volume: skin.volume * factor ** 3,
+})
 
 /** Where a fault happened, if it says. */
 const placeOf = (fault: BrokenPromise | null): string => {

@@ -1,12 +1,12 @@
 /**
- * The skin does not depend on how the solid lies, nor on the order in which its vertices and faces are listed; and it is
+ * The skin does not depend on how the solid lies, on its size, nor on the order in which its vertices and faces are listed; and it is
  * the same whether rotations are used or every plane is cut up by itself.
  */
 import { describe, expect, test } from 'vitest'
-import { identity3 } from '../../src/geometry/vec3'
+import { identity3, scale } from '../../src/geometry/vec3'
 import { computeSkin, type Skin, validateSkin } from '../../src/skin'
 import { buildSolid, listFamily, transformSolid } from '../../src/solids'
-import type { FillRule } from '../../src/solids/types'
+import type { FillRule, Solid } from '../../src/solids/types'
 import { randomRotation, seeded } from '../support/random'
 
 const counts = (skin: Skin): unknown => ({
@@ -32,21 +32,51 @@ const expectAlike = (a: Skin, b: Skin): void => {
   expect(worst(onSurface)).toBeLessThan(1e-6)
 }
 
-describe('the skin of all 75, turned and shuffled', () => {
+const resized = (solid: Solid, factor: number): Solid => ({
+  ...solid,
+  vertices: solid.vertices.map((v) => scale(v, factor)),
+})
+
+/** The skin of a solid that is `factor` times too large, told in its old unit. */
+const shrunk = (skin: Skin, factor: number): Skin => ({
+  ...skin,
+  points: skin.points.map((p) => scale(p, 1 / factor)),
+  panels: skin.panels.map((p) => ({ ...p, area: p.area / factor ** 2 })),
+  creases: skin.creases.map((c) => ({ ...c, length: c.length / factor })),
+  area: skin.area / factor ** 2,
+  volume: skin.volume / factor ** 3,
+})
+
+/** Turned, shuffled, and a thousand times as large or as small. */
+const expectInvariant = (id: string, fill: FillRule, seed: number): void => {
+  const solid = buildSolid(id)
+  const plain = computeSkin(solid, fill)
+  expect(validateSkin(plain).filter((c) => !c.ok)).toEqual([])
+  const factor = seed % 2 === 0 ? 1000 : 0.001
+  const other = computeSkin(resized(transformSolid(solid, randomRotation(seeded(seed)), seed), factor), fill)
+  expect(validateSkin(other).filter((c) => !c.ok)).toEqual([])
+  const moved = shrunk(other, factor)
+  expectAlike(moved, plain)
+  expect(Math.abs(moved.area / plain.area - 1)).toBeLessThan(1e-9)
+  expect(Math.abs(moved.volume / plain.volume - 1)).toBeLessThan(1e-9)
+}
+
+describe('the skin of all 75, turned, shuffled and resized', () => {
   for (const [k, facts] of listFamily('uniform').entries())
     for (const fill of ['nonzero', 'evenodd'] as const satisfies readonly FillRule[]) {
       const seed = 100 + k
       test(`${facts.id} (${fill}), seed ${seed}`, () => {
-        const solid = buildSolid(facts.id)
-        const plain = computeSkin(solid, fill)
-        expect(validateSkin(plain).filter((c) => !c.ok)).toEqual([])
-        const moved = computeSkin(transformSolid(solid, randomRotation(seeded(seed)), seed), fill)
-        expect(validateSkin(moved).filter((c) => !c.ok)).toEqual([])
-        expectAlike(moved, plain)
-        expect(Math.abs(moved.area / plain.area - 1)).toBeLessThan(1e-9)
-        expect(Math.abs(moved.volume / plain.volume - 1)).toBeLessThan(1e-9)
+        expectInvariant(facts.id, fill, seed)
       })
     }
+})
+
+describe('the skin of the families, turned, shuffled and resized', () => {
+  let seed = 1000
+  for (const family of ['prism', 'antiprism', 'dual', 'compound'] as const)
+    test(`all of family ${family}, seeds from ${seed}`, () => {
+      for (const { id } of listFamily(family)) expectInvariant(id, 'nonzero', seed++)
+    }, 120_000)
 })
 
 describe('symmetry is a short cut only', () => {
