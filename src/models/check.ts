@@ -146,8 +146,11 @@ export const unflatness = (
   return most
 }
 
-/** @throws InputError when all corners lie in one plane or on one line */
-export const checkVolume = (file: string, points: readonly Vec3[], reach: number): void => {
+/**
+ * @param thin less than this across is no body, in file units
+ * @throws InputError when all corners lie in one plane or on one line, or nearly
+ */
+export const checkVolume = (file: string, points: readonly Vec3[], thin: number): void => {
   const farthest = (from: Vec3, height: (d: Vec3) => number): Vec3 =>
     points.reduce<Vec3>(
       (best, p) => {
@@ -160,18 +163,15 @@ export const checkVolume = (file: string, points: readonly Vec3[], reach: number
   const along = farthest(o, norm)
   const wide = farthest(o, (d) => norm(cross(d, along)))
   const normal = cross(along, wide)
-  const what = 'the model encloses no volume; export a solid body.'
-  if (!(norm(normal) > reach * norm(along))) throw fault(file, '', `all corners lie on one line: ${what}`)
+  const across = norm(normal) / norm(along)
+  const what = 'the model encloses no volume that could be built; export a solid body.'
+  if (!(across > thin)) throw fault(file, '', `all corners lie on one line, within ${short(across)}: ${what}`)
   const n = scale(normal, 1 / norm(normal))
-  if (
-    !(
-      Math.abs(
-        dot(
-          farthest(o, (d) => Math.abs(dot(d, n))),
-          n,
-        ),
-      ) > reach
-    )
+  const high = Math.abs(
+    dot(
+      farthest(o, (d) => Math.abs(dot(d, n))),
+      n,
+    ),
   )
-    throw fault(file, '', `all corners lie in one plane: ${what}`)
+  if (!(high > thin)) throw fault(file, '', `all corners lie in one plane, within ${short(high)}: ${what}`)
 }

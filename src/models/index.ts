@@ -18,6 +18,8 @@ export { isModelUnit, type ModelUnit, modelUnits, unitHeightMm } from './unit'
 
 /** Corners off their face's plane by no more than this part of the model's radius still make a flat face: 0.0125 mm at 250 mm. */
 const flatEnough = 1e-4
+/** A body thinner than this part of its radius is a needle or a sheet: 0.025 mm at 250 mm. */
+const leastThickness = 2e-4
 /** Corners nearer than this part of the radius may be one, if the model does not close otherwise. */
 const nearEnough = 2e-5
 
@@ -105,7 +107,7 @@ const build = (raw: RawModel, file: string, progress: Progress): Model => {
   }
   const { points } = mended
   checkCycles(file, closed.faces, points, place)
-  checkVolume(file, points, used)
+  checkVolume(file, points, Math.max(used, leastThickness * size))
   if (closed.open.length > 0) throw notClosed(file, points, closed.faces, closed.open, place)
   progress('model', 0.7)
   const off = unflatness(file, points, closed.faces, flatEnough * size, size, place, progress)

@@ -1,6 +1,6 @@
 /** Checks of a plan's model in space: panels, closing, creases, angles, bodies. */
 import { add, cross, distance, dot, norm, scale, sub, type Vec3 } from '../geometry/vec3'
-import { type PlanIndex, verdict, within } from './check-support'
+import { offPlaneMm, type PlanIndex, verdict, within } from './check-support'
 import type { PlanCheck, PlanPanel, Point3 } from './types'
 
 const zero: Vec3 = [0, 0, 0]
@@ -134,7 +134,7 @@ export const creasesCover = ({ plan, panels, near }: PlanIndex): PlanCheck => {
  */
 export const anglesAgree = ({ plan, panels }: PlanIndex): PlanCheck => {
   const faults: string[] = []
-  const loose = plan.docket.closed?.offPlaneMm ?? 0
+  const loose = offPlaneMm(plan)
   for (const { id, panels: sides, ends, innerAngle } of plan.creases) {
     // Degrees; normals may be written to six places, and an edge a little off its panels' planes tilts against them.
     const slack = 3e-4 + (60 * loose) / distance(...ends)

@@ -41,9 +41,16 @@ export const indexPlan = (plan: Plan): PlanIndex => {
     pieces: new Map(plan.pieces.map((piece) => [piece.id, piece])),
     laid,
     tabs,
-    near: 1e-6 * plan.model.heightMm + (plan.docket.closed?.offPlaneMm ?? 0),
+    near: 1e-6 * plan.model.heightMm + offPlaneMm(plan),
   }
 }
+
+/**
+ * How far points may be off their panels' planes, as the plan itself says: closed slivers, rounded coordinates. For the
+ * latter never more than a thousandth of the height, whatever a file may claim.
+ */
+export const offPlaneMm = ({ model, docket }: Plan): number =>
+  Math.min(model.offPlaneMm ?? 0, 1e-3 * model.heightMm) + (docket.closed?.offPlaneMm ?? 0)
 
 /** A check's verdict: its first faults, and how many more there are. */
 export const verdict = (name: string, faults: readonly string[], fine: string): PlanCheck => {

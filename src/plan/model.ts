@@ -1,6 +1,6 @@
 /** The plan's first part: model, panels and creases, in mm. */
 import type { Vec3 } from '../geometry/vec3'
-import { norm, scale } from '../geometry/vec3'
+import { dot, norm, scale } from '../geometry/vec3'
 import type { Skin } from '../skin/types'
 import type { Solid } from '../solids/types'
 import { round6, roundTo } from './round'
@@ -17,7 +17,17 @@ export const planModel = (solid: Solid, skin: Skin, heightMm: number, edgeMm: nu
   edgeMm: roundTo(edgeMm, 9),
   heightMm: roundTo(heightMm, 6),
   fill: skin.fill,
+  ...(solid.precision === undefined
+    ? {}
+    : { offPlaneMm: round6(Math.max(solid.precision, offPlane(skin)) * edgeMm + 1e-6) }),
 })
+
+/** The greatest distance of a panel's corner from the plane through its first corner. */
+const offPlane = ({ panels, points }: Skin): number =>
+  panels.reduce((most, { normal, rings }) => {
+    const height = dot(normal, points[rings[0]![0]!]!)
+    return rings.flat().reduce((m, i) => Math.max(m, Math.abs(dot(normal, points[i]!) - height)), most)
+  }, 0)
 
 export const planPanels = (solid: Solid, skin: Skin, edgeMm: number): PlanPanel[] =>
   skin.panels.map((p) => ({

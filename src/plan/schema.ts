@@ -54,14 +54,19 @@ const ref = (name: string, description?: string): Schema => ({
 
 const hand = choice('Which of the two mirror images; none where there is but one.', 'none', 'left', 'right')
 
-const model = object('What is built.', {
-  id: { type: 'string', pattern: '^[a-z0-9]+(-[a-z0-9]+)*$', description: 'Id of the solid.' },
-  name: text('Name of the solid.'),
-  hand,
-  edgeMm: size("The solid's edge."),
-  heightMm: size("Diameter of the sphere about the solid's centre through its farthest vertex."),
-  fill: choice('Whether the centres of star polygons are filled or open.', 'nonzero', 'evenodd'),
-})
+const model = object(
+  'What is built.',
+  {
+    id: { type: 'string', pattern: '^[a-z0-9]+(-[a-z0-9]+)*$', description: 'Id of the solid.' },
+    name: text('Name of the solid.'),
+    hand,
+    edgeMm: size("The solid's edge."),
+    heightMm: size("Diameter of the sphere about the solid's centre through its farthest vertex."),
+    fill: choice('Whether the centres of star polygons are filled or open.', 'nonzero', 'evenodd'),
+    offPlaneMm: length('How far points may be off their places and planes, where coordinates were rounded.'),
+  },
+  ['offPlaneMm'],
+)
 
 const panel = object('One flat region of the skin, seen from one side.', {
   id: ref('id'),

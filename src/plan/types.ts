@@ -13,6 +13,8 @@ export interface PlanModel {
   /** Diameter of the sphere through the solid's vertices. */
   heightMm: number
   fill: 'nonzero' | 'evenodd'
+  /** How far points may be off their places and off the planes of their panels; only for models read from files, whose coordinates are rounded. */
+  offPlaneMm?: number
 }
 export interface PlanPanel {
   id: number
