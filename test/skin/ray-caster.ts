@@ -54,27 +54,35 @@ const turns = (ring: readonly V[], normal: V, p: V): number => {
   return Math.round(angle / (2 * Math.PI))
 }
 
+/** Distance at which a ray meets a filled polygon, or null. */
+const meets = ({ polygon, normal, point, centre, reach }: Prepared, from: V, direction: V): number | null => {
+  const slope = dot(normal, direction)
+  if (slope === 0) return null
+  const distance = dot(normal, sub(point, from)) / slope
+  if (distance <= 0) return null
+  const p: V = [from[0] + distance * direction[0], from[1] + distance * direction[1], from[2] + distance * direction[2]]
+  const away = sub(p, centre)
+  if (dot(away, away) > reach) return null
+  const w = polygon.rings.reduce((sum, ring) => sum + turns(ring, normal, p), 0)
+  return (polygon.rule === 'nonzero' ? w !== 0 : w % 2 !== 0) ? distance : null
+}
+
 /** Index and distance of the first polygon that the ray meets, or null. */
 export const cast = (list: readonly Prepared[], from: V, direction: V): { index: number; distance: number } | null => {
   let best: { index: number; distance: number } | null = null
   for (let index = 0; index < list.length; index++) {
-    const { polygon, normal, point, centre, reach } = list[index] as Prepared
-    const slope = dot(normal, direction)
-    if (slope === 0) continue
-    const distance = dot(normal, sub(point, from)) / slope
-    if (distance <= 0 || (best && distance >= best.distance)) continue
-    const p: V = [
-      from[0] + distance * direction[0],
-      from[1] + distance * direction[1],
-      from[2] + distance * direction[2],
-    ]
-    const away = sub(p, centre)
-    if (dot(away, away) > reach) continue
-    const w = polygon.rings.reduce((sum, ring) => sum + turns(ring, normal, p), 0)
-    if (polygon.rule === 'nonzero' ? w !== 0 : w % 2 !== 0) best = { index, distance }
+    const prepared = list[index] as Prepared
+    const slope = dot(prepared.normal, direction)
+    if (best && dot(prepared.normal, sub(prepared.point, from)) / slope >= best.distance) continue
+    const distance = meets(prepared, from, direction)
+    if (distance !== null) best = { index, distance }
   }
   return best
 }
+
+/** How often a ray crosses the polygons. */
+export const crossings = (list: readonly Prepared[], from: V, direction: V): number =>
+  list.reduce((n, polygon) => (meets(polygon, from, direction) === null ? n : n + 1), 0)
 
 export const facesAsPolygons = (solid: Solid, rule: FillRule): Polygon3[] =>
   solid.faces.map((f) => ({ rings: [f.cycle.map((i) => solid.vertices[i] as V)], rule }))

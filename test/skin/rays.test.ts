@@ -85,4 +85,19 @@ describe('rays from outside', () => {
         expect([id, hits > 100, worst < 1e-9]).toEqual([id, true, true])
       }
     })
+
+  for (const [k, { id }] of listFamily('compound').entries())
+    test(`${id}, ${rays / 2} rays, seed ${7700 + k}`, () => {
+      const { hits, worst } = castAll(id, 'nonzero', rays / 2, 7700 + k)
+      expect(hits).toBeGreaterThan(rays / 6)
+      expect(worst).toBeLessThan(1e-9)
+    })
+
+  for (const family of ['dual', 'antiprism'] as const)
+    test(`family ${family}, 200 rays each, seeds from 7800`, () => {
+      for (const [k, { id }] of listFamily(family).entries()) {
+        const { hits, worst } = castAll(id, 'nonzero', 200, 7800 + k)
+        expect([id, hits > 10, worst < 1e-8]).toEqual([id, true, true])
+      }
+    })
 })
