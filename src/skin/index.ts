@@ -44,6 +44,7 @@ export const computeSkin = (solid: Solid, fill: FillRule = 'nonzero', progress: 
   for (const tolerance of roughTolerances(solid.precision)) {
     try {
       const skin = skinWithin(solid, fill, tolerance, progress)
+      progress('skin', 0.99)
       const failed = validateSkin(skin).filter((c) => !c.ok)
       if (failed.length === 0) return skin
       fault = new BrokenPromise('The skin does not keep its promises.', { failed })
@@ -126,7 +127,7 @@ export const skinWithin = (solid: Solid, fill: FillRule, tolerance: Tolerance, p
   )
   progress('skin', 0.9)
   const slack = solid.precision === undefined ? 0 : tolerance.merge
-  return assemble(solid, fill, raw, points, slack)
+  return assemble(solid, fill, raw, points, slack, (done) => progress('skin', 0.9 + 0.08 * done))
 }
 
 const assemble = (
@@ -135,8 +136,10 @@ const assemble = (
   raw: readonly RawPanel[],
   points: readonly Vec3[],
   slack: number,
+  report: (done: number) => void,
 ): Skin => {
-  const { stretches, stretchOf } = findStretches(raw, points, slack)
+  const { stretches, stretchOf } = findStretches(raw, points, slack, (done) => report(0.5 * done))
+  report(0.5)
   const lengths = stretches.map((s) => distance(points[s.from]!, points[s.to]!))
   const pairing = pairContacts(stretches, raw.length, lengths)
 
@@ -210,6 +213,7 @@ const assemble = (
       body: pairing.bodyOf[id]!,
     }
   })
+  report(0.7)
   const kept: Vec3[] = []
   for (const [v, id] of used) kept[id] = points[v]!
   const endsOf = ([a, b]: readonly [number, number]): [number, number] => [renumber(a), renumber(b)]

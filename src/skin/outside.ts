@@ -177,12 +177,33 @@ interface Hit {
   readonly point: Vec3
 }
 
-/**
- * First filled face that a ray meets, or null if it escapes. A face plane that the ray starts on is no hit.
- */
-export const firstHit = (faces: readonly FilledFace[], from: Vec3, direction: Vec3): Hit | null => {
+/** Spheres round the faces, x, y, z, radius² face after face: most faces are passed by far off. */
+const spheresRound = (faces: readonly FilledFace[]): Float64Array => {
+  const spheres = new Float64Array(4 * faces.length)
+  faces.forEach(({ cycle, frame }, i) => {
+    const points = cycle.map(([x, y]) => toSpace(frame, x, y))
+    const centre = scale(
+      points.reduce((s, p) => add(s, p), [0, 0, 0] as Vec3),
+      1 / points.length,
+    )
+    const reach = points.reduce((most, p) => Math.max(most, dot(sub(p, centre), sub(p, centre))), 0)
+    spheres.set([...centre, reach * (1 + 1e-9)], 4 * i)
+  })
+  return spheres
+}
+
+/** First filled face that a ray meets, or null if it escapes. A face plane that the ray starts on is no hit. */
+const firstHit = (faces: readonly FilledFace[], spheres: Float64Array, from: Vec3, direction: Vec3): Hit | null => {
+  const [ox, oy, oz] = from
+  const [dx, dy, dz] = direction
   let best: Hit | null = null
-  for (const face of faces) {
+  for (let i = 0; i < faces.length; i++) {
+    const x = spheres[4 * i]! - ox
+    const y = spheres[4 * i + 1]! - oy
+    const z = spheres[4 * i + 2]! - oz
+    const along = x * dx + y * dy + z * dz
+    if (x * x + y * y + z * z - along * along > spheres[4 * i + 3]!) continue
+    const face = faces[i]!
     const { normal, origin } = face.frame
     const slope = dot(normal, direction)
     if (Math.abs(slope) < 1e-9) continue
@@ -251,6 +272,7 @@ const castRays = (
     })
   }
   const open = [...pieces.values()].filter((p) => p.volume > -1e-12).sort((a, b) => b.volume - a.volume)
+  const spheres = spheresRound(faces)
   for (const [i, piece] of open.entries()) {
     report(i / open.length)
     piece.sides.sort((a, b) => b.area - a.area)
@@ -262,7 +284,7 @@ const castRays = (
       const inside = cells[cell]!.inside
       const from = toSpace(frame, inside[0], inside[1])
       const direction = spread(k, scale(frame.normal, side === 0 ? 1 : -1))
-      const hit = firstHit(faces, from, direction)
+      const hit = firstHit(faces, spheres, from, direction)
       if (!hit) regions.union(infinity, sideOf(base.get(plane)!, cell, side))
       else {
         const other = sideHit(set, arrangements, base, hit, direction)

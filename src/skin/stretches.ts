@@ -37,7 +37,12 @@ export interface Stretches {
  * @param on how far points may be off their lines and planes
  * @throws BrokenPromise when outside and inside do not take turns round an edge
  */
-export const findStretches = (panels: readonly RawPanel[], points: readonly Vec3[], on: number): Stretches => {
+export const findStretches = (
+  panels: readonly RawPanel[],
+  points: readonly Vec3[],
+  on: number,
+  report: (done: number) => void = () => {},
+): Stretches => {
   // Angles this close are one direction: two panels back to back.
   const sameAngle = Math.max(1e-6, 20 * on)
   const groups = new Map<number, number>()
@@ -58,7 +63,10 @@ export const findStretches = (panels: readonly RawPanel[], points: readonly Vec3
       }),
     ),
   )
-  const fans = members.map((list) => fanOf(list, panels, points, sameAngle))
+  const fans = members.map((list, i) => {
+    if (i % 1024 === 0) report(i / members.length)
+    return fanOf(list, panels, points, sameAngle)
+  })
 
   // Two groups grow together when every ring that runs through one runs straight on through the other.
   const through = new Map<number, number>()

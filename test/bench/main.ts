@@ -1,11 +1,15 @@
-/** `npm run bench -- skin|union|plan …`, all without a name. Ratios within one run, for people; no test depends on it. */
+/** `npm run bench -- skin|plan …`, all without a name. Ratios within one run, for people; no test depends on it. */
+import { benchMeshes } from './meshes'
 import { benchPlan } from './plan'
 import { benchSkin } from './skin'
 import { benchUnion } from './union'
 
 const benches: Readonly<Record<string, () => void | Promise<void>>> = {
-  skin: benchSkin,
-  union: benchUnion,
+  skin: async () => {
+    benchSkin()
+    await benchUnion()
+    benchMeshes()
+  },
   plan: benchPlan,
 }
 
