@@ -20,7 +20,7 @@ export { isModelUnit, type ModelUnit, modelUnits, unitHeightMm } from './unit'
 const flatEnough = 1e-4
 /** A body thinner than this part of its radius is a needle or a sheet: 0.025 mm at 250 mm. */
 const leastThickness = 2e-4
-/** Corners nearer than this part of the radius may be one, if the model does not close otherwise. */
+/** Corners nearer than this part of the radius are one: 0.0025 mm at 250 mm, far below what card can show. */
 const nearEnough = 2e-5
 
 /**
@@ -86,39 +86,30 @@ const build = (raw: RawModel, file: string, progress: Progress): Model => {
   const error = Math.min(roundingOf(raw, greatest, size), flatEnough * size)
 
   // Single-precision programs compute the same corner twice with a few last places between; text only rounds it.
-  const reach = Math.min((raw.numbers === 'text' ? 3 : 8) * error, flatEnough * size)
-  const wide = Math.max(reach, nearEnough * size)
-  let mended = mend(raw, reach, size, () => progress('model', 0.5))
+  const joined = Math.max((raw.numbers === 'text' ? 3 : 8) * error, nearEnough * size)
+  const reach = Math.min(joined, flatEnough * size)
+  const mended = mend(raw, reach, size, () => progress('model', 0.5))
+  if (mended.faces.length === 0)
+    throw fault(
+      file,
+      '',
+      'no face has any area: all corners lie on lines; the model encloses no volume, export a solid body.',
+    )
   progress('model', 0.6)
-  checkLeft(mended, file)
-  let used = reach
-  let closed = closeUp(mended, reach, () => progress('model', 0.6))
-  if (closed.open.length > 0 && wide > reach) {
-    progress('model', 0.65)
-    const again = mend(raw, wide, size, () => progress('model', 0.65))
-    if (again.faces.length > 0) {
-      const better = closeUp(again, wide, () => progress('model', 0.65))
-      if (better.open.length === 0) {
-        mended = again
-        closed = better
-        used = wide
-      }
-    }
-  }
+  const closed = closeUp(mended, reach, () => progress('model', 0.65))
   const { points } = mended
   checkCycles(file, closed.faces, points, place)
-  checkVolume(file, points, Math.max(used, leastThickness * size))
+  checkVolume(file, points, Math.max(reach, leastThickness * size))
   if (closed.open.length > 0) throw notClosed(file, points, closed.faces, closed.open, place)
   progress('model', 0.7)
   const off = unflatness(file, points, closed.faces, flatEnough * size, size, place, progress)
-  // Where the wider reach was needed, corners are no better than that.
-  const precision = Math.max(error, off, used > reach ? used / 2 : 0)
+  const precision = Math.max(error, off, mended.widest)
   progress('model', 0.8)
   const made = solidFrom(file, points, closed.faces, precision, progress)
   const notes = [
     ...raw.notes,
-    ...notesOn(raw, mended, closed, used),
-    ...(off > Math.max(3 * error, used) ? [`Faces up to ${short(off)} off their plane were taken as flat.`] : []),
+    ...notesOn(raw, mended, closed, reach),
+    ...(off > Math.max(3 * error, 2 * mended.widest) ? [`Faces up to ${short(off)} off their plane were taken as flat.`] : []),
     ...(made.tooManyKinds > 0
       ? [`${made.tooManyKinds} materials or colours are more than ${greatestKindCount}; all faces are of one card.`]
       : []),
@@ -130,15 +121,6 @@ const build = (raw: RawModel, file: string, progress: Progress): Model => {
     notes,
     places: closed.faces.map(place),
   }
-}
-
-const checkLeft = ({ faces }: Mended, file: string): void => {
-  if (faces.length === 0)
-    throw fault(
-      file,
-      '',
-      'no face has any area: all corners lie on lines; the model encloses no volume, export a solid body.',
-    )
 }
 
 /** Repairs in plain sentences; corners that STL repeats by its nature are none. */

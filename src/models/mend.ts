@@ -14,6 +14,8 @@ export interface Mended {
   readonly faces: readonly MendedFace[]
   /** Corners that lay near another one without being equal. */
   readonly near: number
+  /** The farthest that one of these was moved, in file units. */
+  readonly widest: number
   /** Vertices of the file that repeat another one exactly. */
   readonly equal: number
   readonly shortEdges: number
@@ -77,7 +79,7 @@ export const mend = (raw: RawModel, reach: number, size: number, beat: () => voi
     }),
   }))
   const unused = given.reduce((sum, id) => sum + (id < 0 ? 1 : 0), 0)
-  return { points, faces: renumbered, near, equal, shortEdges, flatFaces, unused }
+  return { points, faces: renumbered, near, widest: grid.widestMerge, equal, shortEdges, flatFaces, unused }
 }
 
 /** Drops corners that repeat the one before, and spikes: there and back along one edge. */

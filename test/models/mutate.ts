@@ -23,6 +23,39 @@ const tetrahedron = buildSolid('tetrahedron')
 const cube = buildSolid('cube')
 const crossing = both(box([0, 0, 0], [1, 1, 1]), box([0.5, 0.25, 0.25], [1.5, 0.75, 1]))
 
+/** Two tetrahedra through each other; a changed number leaves all faces flat. */
+const stella: Mesh = {
+  vertices: [
+    ...([
+      [1, 1, 1],
+      [1, -1, -1],
+      [-1, 1, -1],
+      [-1, -1, 1],
+    ] as const),
+    ...([
+      [-1, -1, -1],
+      [-1, 1, 1],
+      [1, -1, 1],
+      [1, 1, -1],
+    ] as const),
+  ],
+  faces: [0, 4].flatMap((k) =>
+    [
+      [0, 1, 2],
+      [0, 1, 3],
+      [0, 2, 3],
+      [1, 2, 3],
+    ].map((f) => f.map((v) => v + k)),
+  ),
+}
+const triangulated = ({ vertices, faces }: Mesh): Mesh => ({
+  vertices,
+  faces: faces.flatMap(([a, b, c, d]) => [
+    [a!, b!, c!],
+    [a!, c!, d!],
+  ]),
+})
+
 export const seeds: readonly ModelFile[] = [
   { name: 'tetrahedron.obj', bytes: writeObj(meshOf(tetrahedron)), binary: false },
   {
@@ -32,6 +65,8 @@ export const seeds: readonly ModelFile[] = [
   },
   { name: 'star.obj', bytes: writeObj(starPrism, (x) => x.toFixed(6)), binary: false },
   { name: 'crossing.obj', bytes: writeObj(crossing), binary: false },
+  { name: 'stella.obj', bytes: writeObj(stella), binary: false },
+  { name: 'crossing.stl', bytes: writeBinaryStl(triangulated(crossing)), binary: true },
   { name: 'tetrahedron.stl', bytes: writeTextStl(trianglesOf(tetrahedron), (x) => x.toExponential(6)), binary: false },
   { name: 'cube.stl', bytes: writeBinaryStl(trianglesOf(cube), 'solid cube'), binary: true },
   { name: 'star.ply', bytes: writePly(starPrism, { form: 'ascii', extras: true }), binary: false },
