@@ -1,5 +1,6 @@
 /** A builder's model from disk. */
 import { readFileSync, statSync } from 'node:fs'
+import { basename } from 'node:path'
 import { InputError, type Progress } from '../errors'
 import { checkFileSize, type Model, readModel } from '../models'
 import { typedPath } from './folder'
@@ -10,7 +11,7 @@ export const readModelFile = (typed: string, progress?: Progress): Model => {
   try {
     const { size, isFile } = regular(path)
     if (!isFile) throw new InputError(`${typed} is no file; name a model, for example --file model.obj.`, '--file')
-    checkFileSize(size, typed)
+    checkFileSize(size, basename(path))
     return readModel(readFileSync(path), typed, progress)
   } catch (error) {
     const { code } = error as NodeJS.ErrnoException

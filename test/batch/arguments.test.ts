@@ -57,6 +57,19 @@ describe('the command line', () => {
     expect(readCommand(['plan', 'cube', '--out', 'x', '--height', told])).toMatchObject({ heightMm: height })
   })
 
+  test('a model from a file, with a height or with its own unit', () => {
+    expect(readCommand(words('plan --file a.obj --height 250 --out x'))).toMatchObject({ file: 'a.obj', heightMm: 250 })
+    const kept = readCommand(words('plan --out x --file=a.stl --unit in'))
+    expect(kept).toMatchObject({ name: 'plan', file: 'a.stl', unit: 'in' })
+    expect(kept).not.toHaveProperty('heightMm')
+    expect(readCommand(words('skin --file a.ply --json'))).toEqual({
+      name: 'skin',
+      file: 'a.ply',
+      fill: 'nonzero',
+      json: true,
+    })
+  })
+
   const wrong: [line: string, message: RegExp][] = [
     ['', /^The command is missing; say list, skin or plan/],
     ['unfold cube', /^There is no command unfold; say list, skin or plan/],
@@ -89,6 +102,14 @@ describe('the command line', () => {
     ['plan cube --height 250 --out x --paper a5', /^--paper is a4 or letter, not a5/],
     ['plan cube --height 250 --out x --hand both', /^--hand is left or right, not both/],
     ['plan cube --height 250 --out x --side top', /^--side is outside or inside, not top/],
+    ['plan cube --file a.obj --height 250 --out x', /^Say either cube or --file, not both/],
+    ['plan --file a.obj --out x', /^The height is missing/],
+    ['plan --file a.obj --height 250 --unit mm --out x', /^Say either --height or --unit, not both/],
+    ['plan --file a.obj --unit ft --out x', /^--unit is mm, cm, m, in, not ft/],
+    ['plan cube --unit mm --out x', /^--unit goes with --file/],
+    ['plan --file= --height 250 --out x', /^Say which file/],
+    ['plan --file', /^--file needs a value: --file model.obj/],
+    ['skin --file a.obj --all', /^Say either --file or --all/],
     ['plan cube --height 250 --out x --scale 2', /^There is no option --scale; plan takes --height, --out, --paper/],
   ]
   test.each(wrong)('"%s" is refused in one line that says what would be right', (line, message) => {
