@@ -17,12 +17,13 @@ export const looseWalls = (skin: Skin): number[] => {
       if (list) list.push(panel)
       else panelsOf.set(f, [panel])
     }
+  const boxes = skin.panels.map((panel) => boxOf(panel.rings.flat().map((i) => skin.points[i]!)))
   const found = new Set<number>()
   const tried = new Map<string, boolean>()
   for (const [face, panels] of panelsOf)
     for (const a of panels)
       for (const b of panels) {
-        if (a.id >= b.id || dot(a.normal, b.normal) > 0) continue
+        if (a.id >= b.id || dot(a.normal, b.normal) > 0 || !meet(boxes[a.id]!, boxes[b.id]!)) continue
         const key = `${a.id} ${b.id}`
         const loose = tried.get(key) ?? overlap(skin, a, b)
         tried.set(key, loose)
@@ -30,6 +31,22 @@ export const looseWalls = (skin: Skin): number[] => {
       }
   return [...found].sort((x, y) => x - y)
 }
+
+interface Box {
+  readonly low: readonly number[]
+  readonly high: readonly number[]
+}
+
+const boxOf = (points: readonly Vec3[]): Box => {
+  const axes = [0, 1, 2]
+  return {
+    low: axes.map((k) => points.reduce((m, p) => Math.min(m, p[k]!), Number.POSITIVE_INFINITY)),
+    high: axes.map((k) => points.reduce((m, p) => Math.max(m, p[k]!), Number.NEGATIVE_INFINITY)),
+  }
+}
+
+/** Clipping is dear, and most panels of a face lie far apart. */
+const meet = (a: Box, b: Box): boolean => a.low.every((x, k) => x <= b.high[k]! && b.low[k]! <= a.high[k]!)
 
 const overlap = (skin: Skin, a: SkinPanel, b: SkinPanel): boolean => {
   const { u, v } = planeFrame(a.normal)
