@@ -2,7 +2,7 @@
 import { parseArgs } from 'node:util'
 import { InputError } from '../errors'
 import { isModelUnit, type ModelUnit, modelUnits } from '../models'
-import { greatestHeightMm, leastHeightMm, usualChoices } from '../plan/choices'
+import { greatestCloseMm, greatestHeightMm, leastHeightMm, usualChoices } from '../plan/choices'
 import type { FillRule } from '../solids/types'
 
 /** What a plan is made of, and how large: a file's own unit may stand for the height. */
@@ -25,6 +25,7 @@ export type Command =
       readonly hand: 'left' | 'right'
       readonly side: 'outside' | 'inside'
       readonly colours: 'one' | 'kind'
+      readonly closeBelowMm: number
       readonly out: string
     } & PlanSubject)
 
@@ -35,7 +36,9 @@ export const usage = `Use:
       what can be touched from outside: panels, area, volume, bodies (unit edge; of a file: its own unit)
   npm run --silent batch -- plan ID | --file MODEL --height MM --out DIR [--paper a4|letter] [--fill nonzero|evenodd]
                             [--hand left|right] [--side outside|inside] [--colours one|kind]
+                            [--close-below MM]
       MODEL is an OBJ, STL or PLY file; with --unit mm|cm|m|in instead of --height it keeps its size
+      --close-below 0.3 closes up stretches shorter than that, which no one can cut
       writes plan.json and sheets.pdf into DIR; MM is the diameter of the sphere through the vertices, ${leastHeightMm} to ${greatestHeightMm}
 
 Without --json a table for reading. Exit code 0: done; 2: the command line cannot be followed; 1: anything else.`
@@ -54,6 +57,7 @@ const optionsOf = {
     hand: value,
     side: value,
     colours: value,
+    'close-below': value,
     file: value,
     unit: value,
     help: flag,
@@ -72,6 +76,7 @@ const examples: Readonly<Record<string, string>> = {
   hand: '--hand left or --hand right',
   side: '--side outside or --side inside',
   colours: '--colours one or --colours kind',
+  'close-below': '--close-below 0.3',
 }
 
 type Given = Readonly<Record<string, string | boolean | undefined>>
@@ -124,6 +129,17 @@ const readHeight = (told: string | boolean | undefined): number => {
   if (height < leastHeightMm || height > greatestHeightMm)
     throw new InputError(`The height ${told} is out of range; ${right}.`, '--height')
   return height
+}
+
+const readCloseBelow = (told: string | boolean | undefined): number => {
+  if (told === undefined) return 0
+  const below = typeof told === 'string' && /^(\d+\.?\d*|\.\d+)$/.test(told) ? Number(told) : Number.NaN
+  if (!(below <= greatestCloseMm))
+    throw new InputError(
+      `--close-below is a number of millimetres from 0 to ${greatestCloseMm}, for example 0.3, not ${String(told)}.`,
+      '--close-below',
+    )
+  return below
 }
 
 const oneId = (name: Name, ids: readonly string[], orElse: string): string => {
@@ -198,6 +214,7 @@ export const readCommand = (args: readonly string[]): Command => {
         hand: choose(given, 'hand', ['left', 'right'], usualChoices.hand),
         side: choose(given, 'side', ['outside', 'inside'], usualChoices.side),
         colours: choose(given, 'colours', ['one', 'kind'], usualChoices.colours),
+        closeBelowMm: readCloseBelow(given['close-below']),
         out,
       }
     }

@@ -1,7 +1,7 @@
 /** The command `plan`: writes plan.json and sheets.pdf for one solid. */
 import { writeFileSync } from 'node:fs'
 import { join } from 'node:path'
-import { drawPlan } from '../drawing'
+import { drawPlan, holdWords, partWords } from '../drawing'
 import { InputError, type Progress } from '../errors'
 import { placed, unitHeightMm } from '../models'
 import { writePdf } from '../output'
@@ -9,10 +9,12 @@ import {
   checkChoices,
   greatestHeightMm,
   leastHeightMm,
+  type Plan,
   type PlanChoices,
-  type PlanDocket,
   planSolid,
+  shortStretches,
   usualChoices,
+  usualCloseMm,
 } from '../plan'
 import { planText } from '../plan/file'
 import { buildSolid, type Solid } from '../solids'
@@ -36,12 +38,30 @@ const clearProgress = (): void => {
   if (process.stderr.isTTY) process.stderr.write('\r\x1b[K')
 }
 
-const summary = (name: string, docket: PlanDocket): string[] => [
+const summary = ({ model: { name }, docket }: Plan): string[] => [
   `${name}: ${docket.pieces} pieces of ${docket.templates} templates on ${docket.sheets} sheets`,
   `${docket.seams} seams to glue, ${docket.buttSeams.length} of them without a tab`,
   `about ${docket.hours.total.toFixed(1)} hours; card used ${Math.round(docket.utilisation * 100)} %`,
   `narrowest panel ${docket.tightest.widthMm.toFixed(1)} mm, sharpest inner angle ${docket.sharpestInnerAngle.toFixed(1)}°`,
 ]
+
+/** Bodies and parts, where there is anything to say of them. */
+const holding = (made: Plan): string[] => {
+  const { bodies, contacts = [] } = made.docket
+  if (bodies === 1 && contacts.length === 0) return []
+  return [`${bodies} ${bodies === 1 ? 'body' : 'bodies'}; ${holdWords(made.docket)}`, ...partWords(made)]
+}
+
+const slivers = (made: Plan): string[] => {
+  const { closed } = made.docket
+  if (closed)
+    return [
+      `${closed.stretches} stretches below ${closed.belowMm} mm closed up; no corner moved more than ${closed.movedMm.toFixed(2)} mm`,
+    ]
+  const short = shortStretches(made)
+  if (short === 0) return []
+  return [`${short} stretches are shorter than ${usualCloseMm} mm; --close-below ${usualCloseMm} closes them up`]
+}
 
 interface Subject {
   readonly solid: Solid
@@ -75,12 +95,13 @@ type PlanCommand = Extract<Command, { name: 'plan' }>
 
 /** @throws Error when the plan fails a check of its own; it is written all the same */
 export const plan = async (command: PlanCommand): Promise<string> => {
-  const { out, paper, fill, hand, side, colours } = command
+  const { out, paper, fill, hand, side, colours, closeBelowMm } = command
   const progress = terminalProgress()
   if ('id' in command) knownSolid(command.id)
   const folder = writableFolder(out)
   const { solid, heightMm, notes, explain } = subjectOf(command, progress)
-  const choices: PlanChoices = { ...usualChoices, solid: solid.id, heightMm, paper, fill, hand, side, colours }
+  const own = { solid: solid.id, heightMm, paper, fill, hand, side, colours, closeBelowMm }
+  const choices: PlanChoices = { ...usualChoices, ...own }
   checkChoices(choices)
   const made = (() => {
     try {
@@ -99,5 +120,5 @@ export const plan = async (command: PlanCommand): Promise<string> => {
     const list = failed.map(({ name, detail }) => `${name}: ${detail}`).join('\n')
     throw new Error(`The plan does not keep its promises; do not build from it.\n${list}\n${files.json}`)
   }
-  return [...summary(made.model.name, made.docket), ...notes, files.json, files.pdf].join('\n')
+  return [...summary(made), ...holding(made), ...slivers(made), ...notes, files.json, files.pdf].join('\n')
 }

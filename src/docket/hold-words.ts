@@ -3,7 +3,7 @@ import type { Plan, PlanDocket } from '../plan/types'
 
 const counted = (n: number, one: string, many = `${one}s`): string => `${n} ${n === 1 ? one : many}`
 
-/** One sentence on the places where bodies touch, e.g. `12 stretches held only along a line: 7 by a fold, 5 loose`. */
+/** One sentence on the places where bodies touch, e.g. `12 stretches held only along a line: 7 by a fold across`. */
 export const holdWords = (docket: PlanDocket): string => {
   const { contacts, lineContacts } = docket
   const list = contacts ?? []
@@ -17,7 +17,7 @@ export const holdWords = (docket: PlanDocket): string => {
     [held('seam'), 'by a seam across'],
     [held('strip'), 'needing a strip'],
     [held('gusset'), 'needing a gusset'],
-    [held('apart'), 'loose'],
+    [held('apart'), 'where each side closes by itself'],
   ] as const
   const places = [
     ...(total > 0 ? [`${counted(total, 'stretch', 'stretches')} held only along a line`] : []),

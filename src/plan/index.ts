@@ -9,6 +9,7 @@ export {
 } from './choices'
 export { makePlan, planSolid } from './pipeline'
 export { planSchema } from './schema'
+export { shortStretches } from './short-stretches'
 export { StageCache } from './stages'
 export type * from './types'
 export { validatePlan } from './validate'

@@ -26,13 +26,14 @@ describe('the command line', () => {
       hand: 'right',
       side: 'outside',
       colours: 'one',
+      closeBelowMm: 0,
       out: 'x',
     })
   })
 
   test('plan with all options, in any order and with equals signs', () => {
     const line =
-      'plan --out=a --side inside cube --hand left --height=99.5 --paper letter --fill evenodd --colours kind'
+      'plan --out=a --side inside cube --hand left --height=99.5 --paper letter --fill evenodd --colours kind --close-below 0.25'
     expect(readCommand(words(line))).toMatchObject({
       heightMm: 99.5,
       paper: 'letter',
@@ -40,6 +41,7 @@ describe('the command line', () => {
       hand: 'left',
       side: 'inside',
       colours: 'kind',
+      closeBelowMm: 0.25,
       out: 'a',
     })
   })
@@ -110,6 +112,8 @@ describe('the command line', () => {
     ['plan --file= --height 250 --out x', /^Say which file/],
     ['plan --file', /^--file needs a value: --file model.obj/],
     ['skin --file a.obj --all', /^Say either --file or --all/],
+    ['plan cube --height 250 --out x --close-below 3', /^--close-below is a number of millimetres from 0 to 2/],
+    ['plan cube --height 250 --out x --close-below thin', /for example 0.3, not thin/],
     ['plan cube --height 250 --out x --scale 2', /^There is no option --scale; plan takes --height, --out, --paper/],
   ]
   test.each(wrong)('"%s" is refused in one line that says what would be right', (line, message) => {
