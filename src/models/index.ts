@@ -109,7 +109,9 @@ const build = (raw: RawModel, file: string, progress: Progress): Model => {
   const notes = [
     ...raw.notes,
     ...notesOn(raw, mended, closed, reach),
-    ...(off > Math.max(3 * error, 2 * mended.widest) ? [`Faces up to ${short(off)} off their plane were taken as flat.`] : []),
+    ...(off > Math.max(3 * error, 2 * mended.widest)
+      ? [`Faces up to ${short(off)} off their plane were taken as flat.`]
+      : []),
     ...(made.tooManyKinds > 0
       ? [`${made.tooManyKinds} materials or colours are more than ${greatestKindCount}; all faces are of one card.`]
       : []),

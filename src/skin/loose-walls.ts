@@ -1,6 +1,7 @@
 /**
  * Walls with the outside on both sides. A builder's model may hold them; card has no back that could carry tabs there, and
- * they close off nothing, so they are refused. The catalogue's solids have none.
+ * they close off nothing, so they are refused. Of the 75 only the small snub icosicosidodecahedron has any, and only with
+ * open stars, where two of its triangles lie on each other.
  */
 import { InputError } from '../errors'
 import { intersectionArea } from '../geometry/clip'

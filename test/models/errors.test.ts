@@ -50,7 +50,11 @@ describe('OBJ', () => {
     ['an unknown statement', { 11: 'face 5 6 8 7' }, /line 11: "face" is no statement of an OBJ file/],
     ['a free-form surface', { 11: 'surf 0 1 0 1 1 2 3 4' }, /line 11: "surf" is a free-form/],
     ['no faces', { 10: null, 11: null, 12: null, 13: null, 14: null, 15: null }, /: there are no faces in it; export/],
-    ['flat', { 6: 'v 0 0 0', 7: 'v 1 0 0', 8: 'v 0 1 0', 9: 'v 1 1 0' }, /all corners lie in one plane, within 0: .* no volume/],
+    [
+      'flat',
+      { 6: 'v 0 0 0', 7: 'v 1 0 0', 8: 'v 0 1 0', 9: 'v 1 1 0' },
+      /all corners lie in one plane, within 0: .* no volume/,
+    ],
     [
       'a line',
       { 4: 'v 2 0 0', 5: 'v 3 0 0', 6: 'v 4 0 0', 7: 'v 5 0 0', 8: 'v 6 0 0', 9: 'v 7 0 0' },

@@ -3,7 +3,7 @@ import { describe, expect, test } from 'vitest'
 import { readModel } from '../../src/models'
 import { planSolid, usualChoices } from '../../src/plan'
 import { computeSkin } from '../../src/skin'
-import { buildSolid, listFamily } from '../../src/solids'
+import { buildSolid, listFamily, listSolids } from '../../src/solids'
 import type { Solid } from '../../src/solids/types'
 import { type Mesh, meshOf, trianglesOf, writeBinaryStl, writeObj, writePly, writeTextStl } from './write'
 
@@ -70,6 +70,17 @@ test('all rotations are found again where every digit is written, and one per fa
     // All faces are of one kind of card, so orbits may not be mixed up between pentagons and pentagrams.
     for (const f of read.faces)
       for (const g of read.faces) if (f.orbit === g.orbit) expect(g.cycle).toHaveLength(f.cycle.length)
+  }
+})
+
+test('every family: the centre of symmetry is found, and with it all rotations', () => {
+  for (const { id, family } of listSolids()) {
+    if (family === 'uniform') continue
+    const solid = buildSolid(id)
+    const { solid: read, farthest, notes } = readModel(writeObj(meshOf(solid)), `${id}.obj`)
+    expect(farthest / Math.max(...solid.vertices.map((p) => Math.hypot(...p))), id).toBeCloseTo(1, 9)
+    expect(read.rotations.length, id).toBe(solid.rotations.length)
+    expect(notes, id).toEqual([])
   }
 })
 
