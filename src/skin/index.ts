@@ -18,6 +18,7 @@ import { findTouches } from './touching'
 import type { LineContact, Skin, SkinCrease, SkinPanel } from './types'
 import { validateSkin } from './validate'
 
+export { withPairing } from './pairing'
 export { type Closed, closeSlivers } from './slivers'
 export type { LineContact, Skin, SkinCrease, SkinPanel, Touch } from './types'
 export { validateSkin } from './validate'

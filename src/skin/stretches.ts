@@ -32,6 +32,9 @@ export interface Stretches {
   readonly stretchOf: readonly (readonly (readonly number[])[])[]
 }
 
+/** Angles this close are one direction: two panels back to back. */
+export const backToBack = (on: number): number => Math.max(1e-6, 20 * on)
+
 /**
  * @param panels with one ring edge for every edge of the arrangements
  * @param on how far points may be off their lines and planes
@@ -43,10 +46,9 @@ export const findStretches = (
   on: number,
   report: (done: number) => void = () => {},
 ): Stretches => {
-  // Angles this close are one direction: two panels back to back.
-  const sameAngle = Math.max(1e-6, 20 * on)
+  const sameAngle = backToBack(on)
   const groups = new Map<number, number>()
-  const members: { panel: number; ring: number; edge: number; from: number; to: number }[][] = []
+  const members: FanEdge[][] = []
   const groupOf = panels.map((panel, p) =>
     panel.rings.map((ring, r) =>
       ring.map((from, e) => {
@@ -123,9 +125,19 @@ export const findStretches = (
   return { stretches, stretchOf: groupOf.map((rings) => rings.map((list) => list.map((g) => stretchOfGroup[g]!))) }
 }
 
-const fanOf = (
-  list: readonly { panel: number; ring: number; edge: number; from: number; to: number }[],
-  panels: readonly RawPanel[],
+/** A panel's edge, by the points it runs between. */
+export interface FanEdge {
+  readonly panel: number
+  readonly ring: number
+  readonly edge: number
+  readonly from: number
+  readonly to: number
+}
+
+/** The blades round one edge in order of angle, see `Stretch.blades`. */
+export const fanOf = (
+  list: readonly FanEdge[],
+  panels: readonly { readonly normal: Vec3 }[],
   points: readonly Vec3[],
   sameAngle: number,
 ): Blade[] => {
