@@ -2,7 +2,7 @@
 import { parseArgs } from 'node:util'
 import { InputError } from '../errors'
 import { isModelUnit, type ModelUnit, modelUnits } from '../models'
-import { greatestCloseMm, greatestHeightMm, leastHeightMm, usualChoices } from '../plan/choices'
+import { greatestCloseMm, greatestHeightMm, leastHeightMm, netsWays, usualChoices } from '../plan/choices'
 import type { FillRule } from '../solids/types'
 
 /** What a plan is made of, and how large: a file's own unit may stand for the height. */
@@ -26,6 +26,7 @@ export type Command =
       readonly side: 'outside' | 'inside'
       readonly colours: 'one' | 'kind'
       readonly closeBelowMm: number
+      readonly nets: (typeof netsWays)[number]
       readonly out: string
     } & PlanSubject)
 
@@ -36,7 +37,7 @@ export const usage = `Use:
       what can be touched from outside: panels, area, volume, bodies (unit edge; of a file: its own unit)
   npm run --silent batch -- plan ID | --file MODEL --height MM --out DIR [--paper a4|letter] [--fill nonzero|evenodd]
                             [--hand left|right] [--side outside|inside] [--colours one|kind]
-                            [--close-below MM]
+                            [--nets fewest|repeat|modules|single] [--close-below MM]
       MODEL is an OBJ, STL or PLY file; with --unit mm|cm|m|in instead of --height it keeps its size
       --close-below 0.3 closes up stretches shorter than that, which no one can cut
       writes plan.json and sheets.pdf into DIR; MM is the diameter of the sphere through the vertices, ${leastHeightMm} to ${greatestHeightMm}
@@ -58,6 +59,7 @@ const optionsOf = {
     side: value,
     colours: value,
     'close-below': value,
+    nets: value,
     file: value,
     unit: value,
     help: flag,
@@ -77,6 +79,7 @@ const examples: Readonly<Record<string, string>> = {
   side: '--side outside or --side inside',
   colours: '--colours one or --colours kind',
   'close-below': '--close-below 0.3',
+  nets: '--nets fewest or --nets repeat',
 }
 
 type Given = Readonly<Record<string, string | boolean | undefined>>
@@ -215,6 +218,7 @@ export const readCommand = (args: readonly string[]): Command => {
         side: choose(given, 'side', ['outside', 'inside'], usualChoices.side),
         colours: choose(given, 'colours', ['one', 'kind'], usualChoices.colours),
         closeBelowMm: readCloseBelow(given['close-below']),
+        nets: choose(given, 'nets', netsWays, 'fewest'),
         out,
       }
     }

@@ -95,12 +95,12 @@ type PlanCommand = Extract<Command, { name: 'plan' }>
 
 /** @throws Error when the plan fails a check of its own; it is written all the same */
 export const plan = async (command: PlanCommand): Promise<string> => {
-  const { out, paper, fill, hand, side, colours, closeBelowMm } = command
+  const { out, paper, fill, hand, side, colours, closeBelowMm, nets } = command
   const progress = terminalProgress()
   if ('id' in command) knownSolid(command.id)
   const folder = writableFolder(out)
   const { solid, heightMm, notes, explain } = subjectOf(command, progress)
-  const own = { solid: solid.id, heightMm, paper, fill, hand, side, colours, closeBelowMm }
+  const own = { solid: solid.id, heightMm, paper, fill, hand, side, colours, closeBelowMm, nets }
   const choices: PlanChoices = { ...usualChoices, ...own }
   checkChoices(choices)
   const made = (() => {

@@ -2,16 +2,32 @@
 import { noProgress, type Progress } from '../errors'
 import { convexHull, roomiestAngle, turnedBox } from '../geometry/hull'
 import { compose2, type Motion2, motionBetween, move2, type Vec2 } from '../geometry/vec2'
+import type { Mat3 } from '../geometry/vec3'
 import type { Skin } from '../skin/types'
+import { actionsOn } from './action'
 import { layOutNets, type Net, placedRings } from './lay-out'
+import { moduleOf } from './modules'
 import { edgeEnds, type PanelGraph, panelGraph } from './panel-graph'
 import type { FitRectangle } from './patch'
+import { searchRepeats } from './repeat'
 import { searchFolds } from './search'
 import { type NetTemplate, nameTemplates } from './templates'
 import { refuseTooLarge } from './too-large'
 import type { Piece } from './types'
 
+/**
+ * Ways of cutting up: as few pieces as the sheet allows; as few templates as possible; spikes and pits as units; one panel
+ * a piece.
+ */
+export type Nets = 'fewest' | 'repeat' | 'modules' | 'single'
+
 export interface CutOptions {
+  /** Default: fewest. */
+  readonly nets?: Nets
+  /** Of the solid; needed by `repeat`, which else finds nothing that repeats. */
+  readonly rotations?: readonly Mat3[]
+  /** Most panels a piece may have. */
+  readonly maxPanels?: number
   /** Length of the solid's edge in mm. */
   readonly edgeMm: number
   /** What the printer or the cutter reaches, in mm: every piece fits it with its tabs, turned as it likes. */
@@ -39,11 +55,23 @@ export interface Cut {
  * @throws Cancelled out of `progress`
  */
 export const cutIntoPieces = (skin: Skin, options: CutOptions, progress: Progress = noProgress): Cut => {
-  const { edgeMm, fit, perKind = false, tabRoomMm = 3, seed = 1 } = options
+  const { edgeMm, fit, nets = 'fewest', perKind = false, tabRoomMm = 3, seed = 1 } = options
+  const { maxPanels = Number.POSITIVE_INFINITY } = options
   const graph = panelGraph(skin, edgeMm)
   refuseTooLarge(skin, graph, fit)
   const effort = options.effort ?? usualEffort(graph.flat.length)
-  const folds = searchFolds(graph, { fit: fitWithoutTabs(fit, tabRoomMm), perKind, effort, seed }, progress)
+  const within = fitWithoutTabs(fit, tabRoomMm)
+  const foldsFor: Record<Nets, () => number[]> = {
+    fewest: () => searchFolds(graph, { fit: within, perKind, maxPanels, effort, seed }, progress),
+    modules: () =>
+      searchFolds(graph, { fit: within, perKind, maxPanels, groups: moduleOf(graph), effort, seed }, progress),
+    repeat: () => {
+      const actions = actionsOn(skin, options.rotations ?? [])
+      return searchRepeats(graph, actions, { fit: within, perKind, maxPanels, seed, starts: 40 }, progress)
+    },
+    single: () => [],
+  }
+  const folds = foldsFor[nets]()
   return { pieces: layOutPieces(graph, folds, fit), folds }
 }
 

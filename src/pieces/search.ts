@@ -17,6 +17,9 @@ export interface SearchOptions {
   readonly fit: FitRectangle
   /** Only creases between panels of one face kind may fold. */
   readonly perKind: boolean
+  /** By panel: only creases between panels of one group may fold; missing: all may. */
+  readonly groups?: Int32Array | undefined
+  readonly maxPanels?: number
   /**
    * How long to search after the greedy start, in thousands of panels laid beside others (about 1 ms each); 0 leaves
    * plain greedy merging.
@@ -83,8 +86,11 @@ const foldWeight = 0.05
 
 /** @returns crease ids that fold, ascending */
 export const searchFolds = (graph: PanelGraph, options: SearchOptions, progress: Progress): number[] => {
-  const { fit, perKind, effort, seed } = options
-  const allowed = graph.links.filter((l) => !perKind || graph.kinds[l.sides[0].panel] === graph.kinds[l.sides[1].panel])
+  const { fit, perKind, groups, maxPanels = Number.POSITIVE_INFINITY, effort, seed } = options
+  const allowed = graph.links.filter(({ sides: [a, b] }) => {
+    if (perKind && graph.kinds[a.panel] !== graph.kinds[b.panel]) return false
+    return !groups || groups[a.panel] === groups[b.panel]
+  })
   const singles = graph.flat.map((_, i) => singlePatch(graph, i, fit))
   const nets = new Nets(singles)
   const merge = (links: readonly Link[], joining: (a: Patch, b: Patch, joined: Patch) => void): void => {
@@ -92,7 +98,7 @@ export const searchFolds = (graph: PanelGraph, options: SearchOptions, progress:
       if (i % 64 === 0) progress('pieces', done)
       const a = nets.of[link.sides[0].panel]!
       const b = nets.of[link.sides[1].panel]!
-      if (a === b) return
+      if (a === b || a.panels.length + b.panels.length > maxPanels) return
       laid += 10 + Math.min(a.panels.length, b.panels.length) + Math.max(a.panels.length, b.panels.length) / 8
       const joined = joinPatches(graph, a, b, link, fit)
       if (!joined) return

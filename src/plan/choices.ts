@@ -20,9 +20,13 @@ export const usualChoices: Omit<PlanChoices, 'solid'> = {
   grammage: 160,
 }
 
+/** Ways of cutting up, see `PlanChoices.nets`. */
+export const netsWays = ['fewest', 'repeat', 'modules', 'single'] as const
+
 /** @throws InputError that names the choice at fault and what would be right */
 export const checkChoices = (choices: PlanChoices): void => {
-  const { heightMm, marginMm, gapMm, grammage, closeBelowMm = 0 } = choices
+  const { heightMm, marginMm, gapMm, grammage, closeBelowMm = 0, nets = 'fewest' } = choices
+  if (!netsWays.includes(nets)) throw new InputError(`Nets are ${netsWays.join(', ')}, not ${nets}.`, 'nets')
   if (!Number.isFinite(heightMm) || heightMm < leastHeightMm || heightMm > greatestHeightMm)
     throw new InputError(
       `Height ${heightMm} mm is out of range: choose ${leastHeightMm} to ${greatestHeightMm} mm.`,

@@ -4,6 +4,7 @@ export {
   greatestCloseMm,
   greatestHeightMm,
   leastHeightMm,
+  netsWays,
   usualChoices,
   usualCloseMm,
 } from './choices'

@@ -7,7 +7,6 @@ import { composeDocket, holdsOf, type PlanWithoutDocket } from '../docket'
 import { BrokenPromise, InputError, noProgress, type Progress } from '../errors'
 import { convexHull, fittingAngle } from '../geometry/hull'
 import type { Ring2 } from '../geometry/vec2'
-import { cutIntoPieces } from '../pieces'
 import { flattenPanels } from '../pieces/flatten'
 import { pieceOutline } from '../pieces/outline'
 import type { FitRectangle } from '../pieces/patch'
@@ -19,6 +18,7 @@ import { refuseLooseWalls } from '../skin/loose-walls'
 import { buildSolid, type Solid } from '../solids'
 import { checkChoices } from './choices'
 import { edgeForHeight, planCreases, planModel, planPanels } from './model'
+import { cutSkin } from './nets'
 import { round6 } from './round'
 import { seamLabel } from './seam-labels'
 import { StageCache } from './stages'
@@ -62,19 +62,21 @@ export const planSolid = (
   const whole = cache.get('skin', skinKey, () => sound(computeSkin(solid, choices.fill, progress)))
   if (solid.family === 'own') refuseLooseWalls(solid, whole)
   const closeBelowMm = choices.closeBelowMm ?? 0
+  const nets = choices.nets ?? 'fewest'
   const closed = cache.get('closed', [...skinKey, edgeMm, closeBelowMm], () =>
     closeSlivers(whole, closeBelowMm / edgeMm),
   )
-  const { skin } = closed
-  const netKey = [...skinKey, edgeMm, closeBelowMm, fit, perKind]
+  const netKey = [...skinKey, edgeMm, closeBelowMm, fit, perKind, nets]
   const glued = cache.get('pieces', netKey, () => {
-    ensurePanelsFit(skin, edgeMm, choices.heightMm, fit)
-    const cut = cutIntoPieces(skin, { edgeMm, fit, perKind }, progress)
+    ensurePanelsFit(closed.skin, edgeMm, choices.heightMm, fit)
+    const { rotations } = solid
+    const { skin, cut } = cutSkin(closed.skin, { edgeMm, fit, perKind, nets, rotations }, progress)
     progress('order', 0)
     const { pieces, steps } = renumber(cut.pieces, gluingOrder(skin, cut.pieces))
     const { tabs } = assignTabs(skin, pieces, { fit }, progress)
-    return { pieces, steps, tabs }
+    return { skin, pieces, steps, tabs }
   })
+  const { skin } = glued
   const outlines = glued.pieces.map((piece, i) => pieceOutline(skin, piece, glued.tabs[i]!))
   const sheetKey = [...netKey, choices.paper, choices.marginMm, choices.gapMm, choices.side]
   const nested = cache.get('sheets', sheetKey, () =>

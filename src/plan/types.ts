@@ -185,6 +185,11 @@ export interface PlanChoices {
   /** Between outlines on a sheet. */
   gapMm: number
   grammage: number
+  /**
+   * How the skin is cut up: as few pieces as the sheet allows (the default), as few templates as possible, spikes and pits
+   * as units, or one panel a piece.
+   */
+  nets?: 'fewest' | 'repeat' | 'modules' | 'single'
   /** Stretches shorter than this are closed up, mm; 0 or missing: none. */
   closeBelowMm?: number
 }

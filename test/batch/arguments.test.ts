@@ -27,13 +27,14 @@ describe('the command line', () => {
       side: 'outside',
       colours: 'one',
       closeBelowMm: 0,
+      nets: 'fewest',
       out: 'x',
     })
   })
 
   test('plan with all options, in any order and with equals signs', () => {
     const line =
-      'plan --out=a --side inside cube --hand left --height=99.5 --paper letter --fill evenodd --colours kind --close-below 0.25'
+      'plan --out=a --side inside cube --hand left --height=99.5 --paper letter --fill evenodd --colours kind --close-below 0.25 --nets repeat'
     expect(readCommand(words(line))).toMatchObject({
       heightMm: 99.5,
       paper: 'letter',
@@ -42,6 +43,7 @@ describe('the command line', () => {
       side: 'inside',
       colours: 'kind',
       closeBelowMm: 0.25,
+      nets: 'repeat',
       out: 'a',
     })
   })
@@ -114,6 +116,7 @@ describe('the command line', () => {
     ['skin --file a.obj --all', /^Say either --file or --all/],
     ['plan cube --height 250 --out x --close-below 3', /^--close-below is a number of millimetres from 0 to 2/],
     ['plan cube --height 250 --out x --close-below thin', /for example 0.3, not thin/],
+    ['plan cube --height 250 --out x --nets many', /^--nets is fewest or repeat or modules or single, not many/],
     ['plan cube --height 250 --out x --scale 2', /^There is no option --scale; plan takes --height, --out, --paper/],
   ]
   test.each(wrong)('"%s" is refused in one line that says what would be right', (line, message) => {
