@@ -2,7 +2,7 @@
  * Small pictures without a view, DOM or WebGL, and scene items from the raw faces of a solid. The z-buffer shows faces
  * that cut through each other as they are, so the Shelf needs no skin.
  */
-import { cross, dot, norm, scale, type Vec3 } from '../geometry/vec3'
+import { add, cross, dot, norm, scale, sub, type Vec3 } from '../geometry/vec3'
 import { Camera } from './camera'
 import { filledRings } from './filled-rings'
 import { Picture, type Pixels } from './picture'
@@ -15,17 +15,24 @@ export interface FacesLike {
   readonly faces: readonly { readonly cycle: readonly number[]; readonly kind: number }[]
 }
 
-/** Unit normal of a cycle (star polygons too), turned away from the origin; for a plane through it, as it comes. */
+/**
+ * Unit normal of a cycle (star polygons too), turned away from the origin; for a plane through it, as it comes. The sum of
+ * the cross products has the direction of the signed area; where that cancels out (a crossed quadrilateral with two lobes
+ * alike), the largest corner decides.
+ */
 const normalOf = (cycle: readonly Vec3[]): Vec3 => {
   let sum: Vec3 = [0, 0, 0]
+  let corner: Vec3 = [0, 0, 0]
   cycle.forEach((p, i) => {
-    const c = cross(p, cycle[(i + 1) % cycle.length]!)
-    sum = [sum[0] + c[0], sum[1] + c[1], sum[2] + c[2]]
+    const next = cycle[(i + 1) % cycle.length]!
+    sum = add(sum, cross(p, next))
+    const c = cross(sub(next, p), sub(cycle.at(i - 1)!, p))
+    if (norm(c) > norm(corner)) corner = c
   })
-  const n = norm(sum)
-  // In a plane through the origin that sum is the plane's normal too; only a cycle of no area has none.
-  if (n < 1e-12) return [0, 0, 1]
-  const unit = scale(sum, 1 / n)
+  const across = norm(sum) > 1e-3 * norm(corner) ? sum : corner
+  const n = norm(across)
+  if (!(n > 0)) return [0, 0, 1]
+  const unit = scale(across, 1 / n)
   return dot(unit, cycle[0]!) < -1e-9 ? scale(unit, -1) : unit
 }
 

@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest'
-import { cross, dot, norm } from '../../src/geometry/vec3'
+import { cross, dot, norm, sub } from '../../src/geometry/vec3'
 import { Camera } from '../../src/preview/camera'
 import type { Pixels } from '../../src/preview/picture'
 import { faceItems, renderThumbnail } from '../../src/preview/thumbnail'
@@ -84,6 +84,43 @@ describe('thumbnails', () => {
     }
     expect(blueIn([large, small])).toBe(0)
     expect(blueIn([small, large])).toBeGreaterThan(2000)
+  })
+})
+
+describe('duals whose faces cross themselves', () => {
+  const ids = listFamily('dual')
+    .filter(({ facesByKind }) => facesByKind.some(({ name }) => /crossed|antiparallelogram/.test(name)))
+    .map((facts) => facts.id)
+
+  test.each(ids)('%s: every face lies in its plane and keeps its outline', (id) => {
+    const solid = buildSolid(id)
+    const torn: unknown[] = []
+    for (const { id: face, normal, rings, moreRings } of faceItems(solid, colours)) {
+      const cycle = solid.faces[face]!.cycle.map((v) => solid.vertices[v]!)
+      const drawn = [rings, ...(moreRings ?? [])].flat(2)
+      const off = Math.max(...cycle.map((p) => Math.abs(dot(normal, p) - dot(normal, cycle[0]!))))
+      const most = Math.max(...cycle.map((p) => Math.min(...drawn.map((q) => Math.hypot(...sub(p, q))))))
+      // Corners of a crossed polygon of more sides may lie inside the filled part.
+      if (!(off < 1e-9 && (most < 1e-9 || cycle.length > 4))) torn.push({ face, normal, off, most })
+    }
+    expect(torn).toEqual([])
+  })
+
+  test('some have no signed area at all', () => {
+    expect(ids.length).toBeGreaterThan(3)
+    const flat = ids.filter((id) => {
+      const solid = buildSolid(id)
+      const cycle = solid.faces[0]!.cycle.map((v) => solid.vertices[v]!)
+      const sum = cycle.reduce<readonly number[]>(
+        (s, p, i) => {
+          const c = cross(p, cycle[(i + 1) % cycle.length]!)
+          return [s[0]! + c[0], s[1]! + c[1], s[2]! + c[2]]
+        },
+        [0, 0, 0],
+      )
+      return Math.hypot(...sum) < 1e-9
+    })
+    expect(flat).not.toEqual([])
   })
 })
 
