@@ -21,13 +21,35 @@ const start = async (): Promise<void> => {
   const press = createPress()
   const catalogue = signal<readonly SolidFacts[]>([])
   const trouble = signal<string | null>(null)
-  void press.catalogue().then((answer) => {
-    if (answer.ok) catalogue.value = answer.value
-    else trouble.value = `The list of solids could not be made: ${answer.refusal.message}`
+  // Builders' own models stand after the catalogue.
+  const own = signal<readonly SolidFacts[]>([])
+  const listed = signal<readonly SolidFacts[]>([])
+  effect(() => {
+    catalogue.value = [...listed.value, ...own.value]
+  })
+  // The 75 are there at once, the families a moment later.
+  void press.catalogue('uniform').then(async (first) => {
+    if (first.ok) listed.value = first.value
+    const all = await press.catalogue('all')
+    if (all.ok) listed.value = all.value
+    else trouble.value = `The list of solids could not be made: ${all.refusal.message}`
   })
   const keeper = await createKeeper(() => openStore())
   const planner = createPlanner()
   const workshop = await createWorkshop({ keeper, planner, now: Date.now, newId, rest: 350 })
+
+  // Every model of a build can be pictured and told of.
+  const keptModels = new Set<string>()
+  effect(() => {
+    for (const { model, removed } of [workshop.build.value, ...workshop.builds.value]) {
+      if (!model || removed || keptModels.has(model.id)) continue
+      keptModels.add(model.id)
+      void press.keepModel(model).then((answer) => {
+        if (answer.ok) own.value = [...own.peek(), answer.value]
+        else trouble.value = answer.refusal.message
+      })
+    }
+  })
 
   const spoken = signal('')
   let timer: ReturnType<typeof setTimeout> | undefined
@@ -39,6 +61,7 @@ const start = async (): Promise<void> => {
     catalogue,
     solid: computed(() => catalogue.value.find(({ id }) => id === workshop.choices.value.solid) ?? null),
     trouble,
+    reader: createPlanner(),
     pointed: signal<Pointed>(nothingPointed),
     sheetsOfBench: signal(false),
     spoken,

@@ -20,14 +20,45 @@ const tints: Readonly<Record<string, Tint>> = {
   decagon: { colour: '#a9926f', pattern: 'checks' },
   decagram: { colour: '#6f7f96', pattern: 'plain' },
 }
-const other: Tint = { colour: '#b9b2a6', pattern: 'plain' }
+/** For all other kinds and for materials: one of these, always the same for the same name; never that of squares or
+ * triangles, which stand beside the ends of prisms and antiprisms. */
+const others = ['pentagon', 'pentagram', 'hexagon', 'octagon', 'octagram', 'decagon', 'decagram'] as const
 
-export const tintOf = (kind: string): Tint => tints[kind] ?? other
+export const tintOf = (kind: string): Tint => {
+  let sum = 0
+  for (const letter of kind) sum = (31 * sum + letter.codePointAt(0)!) % 9973
+  return tints[kind] ?? tints[others[sum % others.length]!]!
+}
 export const patternOf = (kind: string): Pattern => tintOf(kind).pattern
 
 /** CSS hex by face kind: the builder's own where there is one. */
 export const colourOf = (kind: string, own: Readonly<Record<string, string>>): string =>
   own[kind] ?? tintOf(kind).colour
+/** Names of face kinds that the catalogue has besides; a picture needs its colours before the facts are there. */
+const rarer = [
+  'kite',
+  'dart',
+  'rhombus',
+  'antiparallelogram',
+  'isosceles triangle',
+  'scalene triangle',
+  'irregular pentagon',
+  'concave pentagon',
+  'irregular pentagram',
+  'irregular hexagon',
+  'concave hexagon',
+  'crossed hexagon',
+  'irregular hexagram',
+  'heptagon',
+  'enneagon',
+  'dodecagon',
+  'dodecagram',
+  'card',
+]
+const numbered = Array.from({ length: 24 }, (_, i) => i + 1).flatMap((n) => [
+  `${n}-gon`,
+  ...Array.from({ length: Math.floor(n / 2) }, (_, d) => `${n}/${d + 1}-gram`),
+])
 export const defaultColours: Readonly<Record<string, string>> = Object.fromEntries(
-  Object.entries(tints).map(([kind, { colour }]) => [kind, colour]),
+  [...Object.keys(tints), ...rarer, ...numbered].map((kind) => [kind, tintOf(kind).colour]),
 )

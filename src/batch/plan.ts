@@ -1,7 +1,7 @@
 /** The command `plan`: writes plan.json and sheets.pdf for one solid. */
 import { writeFileSync } from 'node:fs'
 import { join } from 'node:path'
-import { drawPlan, holdWords, partWords } from '../drawing'
+import { drawPlan, holdWords, partWords, shortStretches, usualCloseMm } from '../drawing'
 import { InputError, type Progress } from '../errors'
 import { placed, unitHeightMm } from '../models'
 import { writePdf } from '../output'
@@ -12,9 +12,7 @@ import {
   type Plan,
   type PlanChoices,
   planSolid,
-  shortStretches,
   usualChoices,
-  usualCloseMm,
 } from '../plan'
 import { planText } from '../plan/file'
 import { buildSolid, type Solid } from '../solids'

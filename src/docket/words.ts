@@ -2,3 +2,4 @@
 export { cautions, cautionsEnd } from './cautions'
 export { holdWords, partWords } from './hold-words'
 export { toolForWidth } from './rates'
+export { shortStretches, usualCloseMm } from './short-stretches'

@@ -7,7 +7,7 @@ import { layer } from './layout'
 import { pieceLines } from './lines'
 import type { DrawingPage, Mark } from './types'
 
-export { cautions, cautionsEnd, holdWords, partWords } from '../docket/words'
+export { cautions, cautionsEnd, holdWords, partWords, shortStretches, usualCloseMm } from '../docket/words'
 export { docketRows, drawDocketPage, duration } from './docket-page'
 export { textWidthMm, wrapText } from './text-width'
 export type * from './types'

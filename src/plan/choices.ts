@@ -4,8 +4,7 @@ import type { PlanChoices } from './types'
 
 export const leastHeightMm = 10
 export const greatestHeightMm = 2000
-/** What card work can hide: a stretch below this is proposed to be closed up (common practice, no source). */
-export const usualCloseMm = 0.3
+/** Beyond this a model would be another one. */
 export const greatestCloseMm = 2
 
 export const usualChoices: Omit<PlanChoices, 'solid'> = {
@@ -18,6 +17,8 @@ export const usualChoices: Omit<PlanChoices, 'solid'> = {
   marginMm: 10,
   gapMm: 2,
   grammage: 160,
+  nets: 'fewest',
+  closeBelowMm: 0,
 }
 
 /** Ways of cutting up, see `PlanChoices.nets`. */

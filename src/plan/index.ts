@@ -6,11 +6,9 @@ export {
   leastHeightMm,
   netsWays,
   usualChoices,
-  usualCloseMm,
 } from './choices'
 export { makePlan, planSolid } from './pipeline'
 export { planSchema } from './schema'
-export { shortStretches } from './short-stretches'
 export { StageCache } from './stages'
 export type * from './types'
 export { validatePlan } from './validate'

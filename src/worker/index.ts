@@ -1,3 +1,5 @@
+export { checkFileSize } from '../models/file'
+export { modelUnits } from '../models/unit'
 export { createPlanner, type Planner } from './planner'
 export { createPress, type Press } from './press'
-export type { Answer, PageSummary, Refusal, Report, SolidFacts } from './protocol'
+export type { Answer, PageSummary, ReadModel, Refusal, Report, Solid, SolidFacts } from './protocol'

@@ -2,19 +2,24 @@
 import { proxy, type Remote, wrap } from 'comlink'
 import { Cancelled } from '../errors'
 import type { Plan, PlanChoices } from '../plan/types'
-import type { Answer, PlannerApi, Report } from './protocol'
+import type { Answer, PlannerApi, ReadModel, Report, Solid } from './protocol'
 
 export interface Planner {
   /**
-   * One plan at a time: a second call stops the first.
+   * One thing at a time: a second call stops the first.
+   * @param model the solid itself where it is not of the catalogue
    * @throws Cancelled when stopped
    * @throws Error when the worker could not be started or died
    */
-  compute(choices: PlanChoices, report: Report): Promise<Answer<Plan>>
+  compute(choices: PlanChoices, report: Report, model?: Solid | null): Promise<Answer<Plan>>
+  /** Reads a model; as `compute`. */
+  read(bytes: Uint8Array, fileName: string, report: Report): Promise<Answer<ReadModel>>
   /** Stops at once whatever is being computed. */
   cancel(): void
   /** Loads the program ahead of its first use. */
   warm(): void
+  /** Stops, and gives back what the worker holds; the next call starts a new one. */
+  close(): void
 }
 
 /**
@@ -44,28 +49,38 @@ export const createPlanner = (start: () => Worker = startPlanner): Planner => {
     remote = wrap<PlannerApi>(mine)
     return remote
   }
-  return {
-    async compute(choices, report) {
-      if (stop) end(new Cancelled())
-      const api = remote ?? begin()
-      const stopped = new Promise<never>((_, reject) => {
-        stop = reject
+  const run = async <T>(
+    report: Report,
+    work: (api: Remote<PlannerApi>, relay: Report) => Promise<Answer<T>>,
+  ): Promise<Answer<T>> => {
+    if (stop) end(new Cancelled())
+    const api = remote ?? begin()
+    const stopped = new Promise<never>((_, reject) => {
+      stop = reject
+    })
+    const myStop = stop
+    try {
+      const relay = proxy<Report>((stage, fraction) => {
+        if (stop === myStop) report(stage, fraction)
       })
-      const myStop = stop
-      try {
-        const relay = proxy<Report>((stage, fraction) => {
-          if (stop === myStop) report(stage, fraction)
-        })
-        return await Promise.race([api.plan(choices, relay) as Promise<Answer<Plan>>, stopped])
-      } finally {
-        if (stop === myStop) stop = null
-      }
-    },
+      return await Promise.race([work(api, relay), stopped])
+    } finally {
+      if (stop === myStop) stop = null
+    }
+  }
+  return {
+    compute: (choices, report, model = null) =>
+      run(report, (api, relay) => api.plan(choices, model, relay) as Promise<Answer<Plan>>),
+    read: (bytes, fileName, report) =>
+      run(report, (api, relay) => api.read(bytes, fileName, relay) as Promise<Answer<ReadModel>>),
     cancel() {
       if (!stop) return
       end(new Cancelled())
       // The next computation need not wait for the program to load.
       begin()
+    },
+    close() {
+      end(new Cancelled())
     },
     warm() {
       if (!remote) begin()

@@ -1,11 +1,12 @@
 /** Draws: pictures of solids, pages, and the PDF. */
 import { expose, transfer } from 'comlink'
 import { type DrawingPage, drawPlan } from '../drawing'
+import { checkedModel, modelFacts } from '../models/stored'
 import { pageToSvg, writePdf } from '../output'
 import { planText } from '../plan/file'
 import { validatePlan } from '../plan/validate'
 import { faceItems, renderThumbnail } from '../preview/thumbnail'
-import { buildSolid, findSolids, listSolids } from '../solids'
+import { buildSolid, findSolids, listFamily, listSolids } from '../solids'
 import type { Solid } from '../solids/types'
 import { answer, answerLater } from './answer'
 import type { PressApi } from './protocol'
@@ -16,12 +17,22 @@ const keepAtMost = 4
 const coloursOf = (solid: Solid, colours: Readonly<Record<string, string>>): string[] =>
   solid.kinds.map(({ name }) => colours[name] ?? '#c8c2b8')
 
+/** Builders' models by id. */
+const models = new Map<string, Solid>()
+const solidOf = (id: string, hand?: 'left' | 'right'): Solid => models.get(id) ?? buildSolid(id, hand)
+
 const api: PressApi = {
-  catalogue: () => answer(() => [...listSolids()]),
+  catalogue: (which) => answer(() => [...(which === 'uniform' ? listFamily('uniform') : listSolids())]),
+  keepModel: (model) =>
+    answer(() => {
+      const solid = checkedModel(model)
+      models.set(solid.id, solid)
+      return modelFacts(solid)
+    }),
   find: (query) => answer(() => findSolids(query).map(({ id }) => id)),
   faces: (id, hand, fill, colours) =>
     answer(() => {
-      const solid = buildSolid(id, hand)
+      const solid = solidOf(id, hand)
       return faceItems(solid, coloursOf(solid, colours), fill).map((item) => ({
         ...item,
         kind: solid.kinds[Number(item.kind)]!.name,
@@ -29,7 +40,7 @@ const api: PressApi = {
     }),
   picture: (id, colours, size) => {
     const made = answer(() => {
-      const solid = buildSolid(id)
+      const solid = solidOf(id)
       return renderThumbnail(faceItems(solid, coloursOf(solid, colours)), { size, direction: [0.42, 0.31, 1] })
     })
     return made.ok ? transfer(made, [made.value.data.buffer]) : made

@@ -4,9 +4,9 @@
  */
 import type { Plan, PlanCheck, PlanChoices } from '../plan/types'
 import type { Pixels, SceneItem } from '../preview'
-import type { SolidFacts } from '../solids/types'
+import type { Solid, SolidFacts } from '../solids/types'
 
-export type { SolidFacts } from '../solids/types'
+export type { Solid, SolidFacts } from '../solids/types'
 
 /** Why something could not be done. */
 export interface Refusal {
@@ -22,9 +22,21 @@ export type Answer<T> = { readonly ok: true; readonly value: T } | { readonly ok
 /** Fraction 0..1 of the stage. */
 export type Report = (stage: string, fraction: number) => void
 
+/** A builder's model as it was read from a file. */
+export interface ReadModel {
+  /** Repaired; its id is made of the file's name and its shape. */
+  readonly solid: Solid
+  /** Distance of the farthest vertex from the centre in the file's own unit. */
+  readonly farthest: number
+  /** What was repaired or left out, in plain sentences. */
+  readonly notes: readonly string[]
+}
+
 /** Long work; stopped by ending the worker. */
 export interface PlannerApi {
-  plan(choices: PlanChoices, report: Report): Answer<Plan>
+  /** @param model the solid itself where `choices.solid` is not of the catalogue */
+  plan(choices: PlanChoices, model: Solid | null, report: Report): Answer<Plan>
+  read(bytes: Uint8Array, fileName: string, report: Report): Answer<ReadModel>
 }
 
 export interface PageSummary {
@@ -39,7 +51,13 @@ export interface PageSummary {
 
 /** Short work that goes on beside the planner. */
 export interface PressApi {
-  catalogue(): Answer<SolidFacts[]>
+  /** The 75 uniform polyhedra, or all families; the second takes about a second. */
+  catalogue(which: 'uniform' | 'all'): Answer<SolidFacts[]>
+  /**
+   * Makes a builder's model known to the press, so that it can be pictured like one of the catalogue. What comes from a
+   * store or a file is looked over first, and refused with a reason when it is no sound solid.
+   */
+  keepModel(model: unknown): Answer<SolidFacts>
   /** Ids, best match first. */
   find(query: string): Answer<string[]>
   /** The raw faces as scene items: id = face index, kind = name of the face kind. */

@@ -62,8 +62,13 @@ describe('choices', () => {
       marginMm: 11,
       gapMm: 3,
       grammage: 180,
+      nets: 'repeat',
+      closeBelowMm: 0.3,
     } as const
     expect(sameChoices(base, { ...base })).toBe(true)
+    // A build of before knows less and means the usual.
+    const { nets, closeBelowMm, ...older } = base
+    expect([nets, closeBelowMm, sameChoices(base, older)]).toEqual(['fewest', 0, true])
     for (const name of Object.keys(other) as (keyof typeof other)[])
       expect(sameChoices(base, { ...base, [name]: other[name] }), name).toBe(false)
   })

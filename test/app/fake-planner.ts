@@ -38,6 +38,8 @@ export const fakePlanner = (): FakePlanner => {
       settle = null
     },
     warm() {},
+    close() {},
+    read: () => Promise.reject(new Error('Nothing is read here.')),
     async finish(answer) {
       const last = planner.asked.at(-1)!
       settle!.resolve(answer ?? { ok: true, value: planFor(last) })

@@ -18,7 +18,7 @@ const workshopOfWorkers = () => {
     })
     expose(
       {
-        plan: async (choices: typeof cube, report: (stage: string, fraction: number) => void) => {
+        plan: async (choices: typeof cube, _: null, report: (stage: string, fraction: number) => void) => {
           await report('skin', 0.25)
           await gate
           return { ok: true, value: planFor(choices) }

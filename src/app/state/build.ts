@@ -1,5 +1,6 @@
 /** A build: what one builder plans and makes of one solid, as it is kept in the store. */
 import type { PlanChoices } from '../../plan/types'
+import type { Solid } from '../../worker'
 import { sameChoices } from './choices'
 import { change, type History, newHistory } from './history'
 import type { Job } from './job'
@@ -15,6 +16,8 @@ export interface Build {
   /** Given by the builder; '' for the solid's own name. */
   readonly name: string
   readonly history: History<Design>
+  /** The builder's own model, where the build was begun with one; it goes wherever the build goes. */
+  readonly model?: Solid
   /** The last plan that was computed; its choices may be older than `history.now`. */
   readonly planned: { readonly choices: PlanChoices; readonly planKey: string } | null
   readonly jobs: readonly Job[]
@@ -29,10 +32,11 @@ export interface Build {
   readonly revision: number
 }
 
-export const newBuild = (id: string, choices: PlanChoices, now: number): Build => ({
+export const newBuild = (id: string, choices: PlanChoices, now: number, model?: Solid): Build => ({
   id,
   name: '',
   history: newHistory({ choices, tints: {} }),
+  ...(model ? { model } : {}),
   planned: null,
   jobs: [],
   job: null,
@@ -43,6 +47,9 @@ export const newBuild = (id: string, choices: PlanChoices, now: number): Build =
 })
 
 export const choicesOf = (build: Build): PlanChoices => build.history.now.choices
+/** The model that the present choices are about; null for a solid of the catalogue. */
+export const modelOf = (build: Build, choices: PlanChoices): Solid | null =>
+  build.model?.id === choices.solid ? build.model : null
 export const jobOf = (build: Build): Job | null => build.jobs.find(({ id }) => id === build.job) ?? null
 
 const sameDesign = (a: Design, b: Design): boolean => {

@@ -6,6 +6,7 @@ export const limits = {
   marginMm: { least: 4, most: 40, unit: 'mm', name: 'Margin' },
   gapMm: { least: 0, most: 20, unit: 'mm', name: 'Gap' },
   grammage: { least: 60, most: 400, unit: 'g/m²', name: 'Card weight' },
+  closeBelowMm: { least: 0, most: 2, unit: 'mm', name: 'Closing up below' },
 } as const
 export type NumberChoice = keyof typeof limits
 
@@ -21,10 +22,16 @@ export const firstChoices = (solid: string): PlanChoices => ({
   marginMm: 10,
   gapMm: 2,
   grammage: 160,
+  nets: 'fewest',
+  closeBelowMm: 0,
 })
 
 const choiceNames = Object.keys(firstChoices('')) as (keyof PlanChoices)[]
-export const sameChoices = (a: PlanChoices, b: PlanChoices): boolean => choiceNames.every((name) => a[name] === b[name])
+/** A choice that an older build does not know stands as it would for a new one. */
+export const sameChoices = (a: PlanChoices, b: PlanChoices): boolean => {
+  const usual = firstChoices('')
+  return choiceNames.every((name) => (a[name] ?? usual[name]) === (b[name] ?? usual[name]))
+}
 
 /**
  * Reads a number as people type it (a comma for the decimal point is fine).
@@ -55,5 +62,7 @@ export const sayChoices = (choices: PlanChoices, isChiral: boolean): string =>
     ...(isChiral ? [`${choices.hand} hand`] : []),
     ...(choices.fill === 'evenodd' ? ['star centres open'] : []),
     choices.colours === 'one' ? 'one card' : 'card by face kind',
+    ...(choices.nets && choices.nets !== 'fewest' ? [`nets: ${choices.nets}`] : []),
+    ...(choices.closeBelowMm ? [`closed up below ${choices.closeBelowMm} mm`] : []),
     `printed ${choices.side}`,
   ].join(', ')

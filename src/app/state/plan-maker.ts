@@ -2,7 +2,7 @@
 import { batch, effect, type ReadonlySignal, type Signal, signal } from '@preact/signals'
 import { Cancelled } from '../../errors'
 import type { Plan, PlanChoices } from '../../plan/types'
-import type { Planner, Refusal } from '../../worker'
+import type { Planner, Refusal, Solid } from '../../worker'
 import { sameChoices } from './choices'
 
 export interface Computing {
@@ -33,6 +33,8 @@ export interface PlanMaker {
 interface Needs {
   readonly planner: Planner
   readonly choices: ReadonlySignal<PlanChoices>
+  /** The solid itself where it is not of the catalogue. */
+  readonly modelFor: (choices: PlanChoices) => Solid | null
   /** There is a plan of the present choices. */
   readonly isFresh: ReadonlySignal<boolean>
   /** Milliseconds that choices must rest before the computation starts. */
@@ -40,7 +42,7 @@ interface Needs {
   readonly onPlan: (plan: Plan, choices: PlanChoices) => void
 }
 
-export const createPlanMaker = ({ planner, choices, isFresh, rest, onPlan }: Needs): PlanMaker => {
+export const createPlanMaker = ({ planner, choices, modelFor, isFresh, rest, onPlan }: Needs): PlanMaker => {
   const computing = signal<Computing | null>(null)
   const halted = signal<Halted | null>(null)
   const wanted = signal(false)
@@ -54,9 +56,13 @@ export const createPlanMaker = ({ planner, choices, isFresh, rest, onPlan }: Nee
     let refusal: Refusal | null = null
     let plan: Plan | null = null
     try {
-      const answer = await planner.compute(wish, (stage, fraction) => {
-        if (isMine()) computing.value = { choices: wish, stage, fraction }
-      })
+      const answer = await planner.compute(
+        wish,
+        (stage, fraction) => {
+          if (isMine()) computing.value = { choices: wish, stage, fraction }
+        },
+        modelFor(wish),
+      )
       if (answer.ok) plan = answer.value
       else refusal = answer.refusal
     } catch (error) {

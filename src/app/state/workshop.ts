@@ -4,12 +4,12 @@
  */
 import { batch, computed, effect, type ReadonlySignal, type Signal, signal } from '@preact/signals'
 import type { Plan, PlanChoices } from '../../plan/types'
-import type { Planner } from '../../worker'
+import type { Planner, Solid } from '../../worker'
 import type { Opened } from '../storage/file'
 import type { Keeper } from '../storage/keeper'
 import { mergeBuilds } from '../storage/merge'
 import type { KnownFacts } from '../storage/types'
-import { type Build, choicesOf, choose, type Design, jobOf, newBuild, redesign, withJob } from './build'
+import { type Build, choicesOf, choose, type Design, jobOf, modelOf, newBuild, redesign, withJob } from './build'
 import { firstChoices, sameChoices } from './choices'
 import { redo, undo } from './history'
 import { glue, type Job, unglue } from './job'
@@ -57,6 +57,8 @@ export interface Workshop {
   resumeJob(id: string): void
   /** Takes a solid to the Board: in this build, or in a new one when this has pieces glued. */
   take(solid: string, hand: PlanChoices['hand']): void
+  /** Begins a build of a builder's own model. */
+  takeModel(model: Solid, heightMm: number): Promise<void>
   rename(name: string): void
   open(id: string): Promise<void>
   openFile(opened: Opened): Promise<void>
@@ -159,6 +161,7 @@ export const createWorkshop = async (around: Surroundings): Promise<Workshop> =>
   const maker = createPlanMaker({
     planner,
     choices,
+    modelFor: (wish) => modelOf(build.peek(), wish),
     isFresh,
     rest: around.rest,
     onPlan(plan, wish) {
@@ -252,6 +255,13 @@ export const createWorkshop = async (around: Surroundings): Promise<Workshop> =>
         void swap(next)
       } else set(choose(build.peek(), wish))
     },
+    async takeModel(model, heightMm) {
+      // Sizes and papers as they were; colours of other face kinds mean nothing here.
+      const wish = { ...choices.peek(), solid: model.id, hand: 'right' as const, heightMm, colours: 'one' as const }
+      const next = newBuild(newId(), wish, now(), model)
+      await keeper.save(next)
+      await swap(next)
+    },
     rename: (name) => set({ ...build.peek(), name: name.trim() }),
     async open(id) {
       if (id === build.peek().id) return
@@ -292,7 +302,7 @@ export const createWorkshop = async (around: Surroundings): Promise<Workshop> =>
     },
     copyBuild() {
       const old = build.peek()
-      const next = { ...newBuild(newId(), choicesOf(old), now()), name: old.name && `${old.name}, copy` }
+      const next = { ...newBuild(newId(), choicesOf(old), now(), old.model), name: old.name && `${old.name}, copy` }
       const copy = { ...next, history: { ...next.history, now: old.history.now } }
       void keeper.save(copy)
       void swap(copy)

@@ -1,5 +1,7 @@
 import { useSignal } from '@preact/signals'
 import { useEffect, useMemo } from 'preact/hooks'
+import { shortStretches, usualCloseMm } from '../../drawing'
+import type { Plan } from '../../plan/types'
 import type { Lit, SceneItem } from '../../preview'
 import { colourOf } from '../palette'
 import { factsKey } from '../state/workshop'
@@ -8,8 +10,19 @@ import { Group, NumberField, Radios } from '../ui/fields'
 import { ModelView } from '../ui/ModelView'
 import { Swatch } from '../ui/Swatch'
 import { pieceByPanel, planItems } from '../ui/scene'
-import { sayColours, sayFill, sayHand, sayHeight, sayNets, sayPaper, saySide } from '../words/consequences'
+import {
+  sayClosed,
+  sayColours,
+  sayCut,
+  sayFill,
+  sayHand,
+  sayHeight,
+  sayNets,
+  sayPaper,
+  saySide,
+} from '../words/consequences'
 import { cardWeights, sayCard } from '../words/craft'
+import { counted, plural } from '../words/figures'
 import { capital } from '../words/solid'
 
 /** The planned model, or the raw faces as long as there is no plan for this solid. */
@@ -87,7 +100,7 @@ const Colours = () => {
           <div key={name} class="tint">
             <Swatch kind={name} tints={tints} />
             <label>
-              {name}s
+              {plural(name)}
               <input
                 type="color"
                 value={colourOf(name, tints)}
@@ -96,7 +109,7 @@ const Colours = () => {
             </label>
             {tints[name] && (
               <button type="button" class="link" onClick={() => workshop.tint(name, null)}>
-                as it was<span class="unseen">, {name}s</span>
+                as it was<span class="unseen">, {plural(name)}</span>
               </button>
             )}
           </div>
@@ -183,11 +196,20 @@ const Choices = () => {
       </Group>
       <Colours />
       <Group title="Nets">
-        <p class="so first">
-          Panels stay joined by folds as long as the net lies flat, does not overlap itself and fits the sheet. Each
-          seam has a single tab, on the piece that is glued earlier.
-        </p>
+        <Radios
+          legend="Cut up into"
+          value={choices.nets ?? 'fewest'}
+          options={[
+            ['fewest', 'fewest pieces'],
+            ['repeat', 'pieces that repeat'],
+            ['modules', 'spikes and pits'],
+            ['single', 'single panels'],
+          ]}
+          onChange={(nets) => workshop.choose({ nets })}
+          consequence={sayCut(choices.nets ?? 'fewest')}
+        />
         <p class="so">{sayNets(plan) ?? 'How many pieces it takes stands here once it is planned.'}</p>
+        <Slivers plan={plan} />
         <details>
           <summary>Advanced</summary>
           <NumberField
@@ -224,6 +246,37 @@ const Choices = () => {
         </details>
       </Group>
     </form>
+  )
+}
+
+/** Stretches that no one can cut: proposed to be closed up when there are any, never done unasked. */
+const Slivers = ({ plan }: { plan: Plan | null }) => {
+  const { workshop } = useApp()
+  const below = workshop.choices.value.closeBelowMm ?? 0
+  const short = plan ? shortStretches(plan) : 0
+  return (
+    <>
+      {below === 0 && short > 0 && (
+        <div class="row proposal">
+          <span class="grow">
+            {counted(short, 'stretch', 'stretches')} shorter than {usualCloseMm} mm: no one can cut or glue them.
+          </span>
+          <button type="button" onClick={() => workshop.choose({ closeBelowMm: usualCloseMm })}>
+            Close them up
+          </button>
+        </div>
+      )}
+      {(below > 0 || short > 0) && (
+        <NumberField
+          name="closeBelowMm"
+          label="Close up stretches shorter than"
+          value={below}
+          step={0.1}
+          onChange={(closeBelowMm) => workshop.choose({ closeBelowMm })}
+          consequence={sayClosed(plan, below)}
+        />
+      )}
+    </>
   )
 }
 

@@ -2,10 +2,11 @@ import { signal, useComputed, useSignal } from '@preact/signals'
 import { useEffect, useMemo, useRef } from 'preact/hooks'
 import type { SceneItem } from '../../preview'
 import type { SolidFacts } from '../../worker'
-import { defaultColours } from '../palette'
+import { colourOf } from '../palette'
 import { factsKey } from '../state/workshop'
 import { useApp } from '../ui/context'
 import { ModelView } from '../ui/ModelView'
+import { OpenModelButton } from '../ui/OpenModel'
 import { Picture } from '../ui/Picture'
 import { counted, degreesText, figure } from '../words/figures'
 import { breakable, capital, sayFaces, sayKnown, saySymmetry } from '../words/solid'
@@ -78,7 +79,8 @@ const Card = ({ solid, onPick }: { solid: SolidFacts; onPick: () => void }) => {
         <Picture solid={solid.id} size={136} />
         <span class="card-name">{breakable(capital(solid.name))}</span>
         <span class="soft figures">
-          No. {solid.index}, {counted(solid.faces, 'face')}
+          {solid.index !== null && `No. ${solid.index}, `}
+          {counted(solid.faces, 'face')}
         </span>
         <span class="card-facts figures">
           {known ? (
@@ -102,7 +104,8 @@ const Looked = ({ solid }: { solid: SolidFacts }) => {
   const seen = solid.chiral ? hand.value : 'right'
   useEffect(() => {
     let stale = false
-    void press.faces(solid.id, seen, 'nonzero', defaultColours).then((answer) => {
+    const colours = Object.fromEntries(solid.facesByKind.map(({ name }) => [name, colourOf(name, {})]))
+    void press.faces(solid.id, seen, 'nonzero', colours).then((answer) => {
       if (!stale && answer.ok) items.value = answer.value
     })
     return () => {
@@ -112,6 +115,9 @@ const Looked = ({ solid }: { solid: SolidFacts }) => {
   const options = useMemo(() => ({ backs: 'same' as const, centre: [0, 0, 0] as [number, number, number] }), [])
   const known = workshop.known.value.get(factsKey(solid.id, 'nonzero'))
   const isHere = workshop.choices.value.solid === solid.id
+  /** A model from a file lives in the build that was begun with it. */
+  const buildWith = (id: string): string | null =>
+    workshop.builds.peek().find(({ model, removed }) => model?.id === id && !removed)?.id ?? null
   return (
     <section class="looked" aria-label={capital(solid.name)} data-looked={solid.id}>
       <h2 tabIndex={-1}>{capital(solid.name)}</h2>
@@ -138,7 +144,9 @@ const Looked = ({ solid }: { solid: SolidFacts }) => {
         type="button"
         class="primary"
         onClick={() => {
-          workshop.take(solid.id, solid.chiral ? hand.value : workshop.choices.value.hand)
+          const kept = solid.family === 'own' && !isHere ? buildWith(solid.id) : null
+          if (kept) void workshop.open(kept)
+          else workshop.take(solid.id, solid.chiral ? hand.value : workshop.choices.value.hand)
           router.go('board')
         }}
       >
@@ -151,34 +159,48 @@ const Looked = ({ solid }: { solid: SolidFacts }) => {
         <dd>
           {solid.vertices}, {solid.edges}
         </dd>
-        <dt>Vertex configuration</dt>
-        <dd>{solid.vertexConfiguration}</dd>
-        <dt>Wythoff symbol</dt>
-        <dd>{solid.wythoff}</dd>
-        <dt>Symmetry</dt>
-        <dd>{saySymmetry(solid.symmetry)}</dd>
-        <dt>Euler characteristic</dt>
-        <dd>{solid.euler}</dd>
-        <dt>Density</dt>
-        <dd>{solid.density ?? 'none'}</dd>
-        <dt>Sides</dt>
-        <dd>{solid.orientable ? 'two (orientable)' : 'one (not orientable)'}</dd>
-        <dt>Dihedral angles</dt>
-        <dd>
-          {solid.dihedralAngles.map(({ kinds, degrees }) => {
-            const [a, b] = kinds.map((kind) => solid.facesByKind.find(({ id }) => id === kind)?.name ?? '')
-            return <div key={`${a} ${b} ${degrees}`}>{`${a} to ${b} ${degreesText(degrees)}`}</div>
-          })}
-        </dd>
+        {ownFacts(solid).map(([name, value]) => [<dt key={name}>{name}</dt>, <dd key={`${name} is`}>{value}</dd>])}
+        {solid.dihedralAngles.length > 0 && <dt>Dihedral angles</dt>}
+        {solid.dihedralAngles.length > 0 && (
+          <dd>
+            {solid.dihedralAngles.map(({ kinds, degrees }) => {
+              const [a, b] = kinds.map((kind) => solid.facesByKind.find(({ id }) => id === kind)?.name ?? '')
+              return <div key={`${a} ${b} ${degrees}`}>{`${a} to ${b} ${degreesText(degrees)}`}</div>
+            })}
+          </dd>
+        )}
         {sayKnown(known).map(([name, value]) => [
           <dt key={name}>{capital(name)}</dt>,
           <dd key={`${name} is`}>{value || <span class="soft">known once it is planned</span>}</dd>,
         ])}
-        <dt>Edge at 250 mm</dt>
-        <dd>{figure(250 / (2 * solid.circumradius), 1)} mm</dd>
+        {solid.family !== 'dual' && solid.family !== 'own' && (
+          <>
+            <dt>Edge at 250 mm</dt>
+            <dd>{figure(250 / (2 * solid.circumradius), 1)} mm</dd>
+          </>
+        )}
       </dl>
+      {solid.notes.map((note) => (
+        <p key={note} class="so">
+          {note}
+        </p>
+      ))}
     </section>
   )
+}
+
+/** Facts that not every solid has. */
+const ownFacts = (solid: SolidFacts): [string, string][] => {
+  const facts: [string, string | number | null][] = [
+    ['Vertex configuration', solid.vertexConfiguration],
+    ['Wythoff symbol', solid.wythoff],
+    ['Symmetry', solid.symmetry && saySymmetry(solid.symmetry)],
+    ['Components', solid.components > 1 ? solid.components : null],
+    ['Euler characteristic', solid.euler],
+    ['Density', solid.density ?? (solid.family === 'own' || solid.family === 'compound' ? null : 'none')],
+    ['Sides', solid.family === 'own' ? null : solid.orientable ? 'two (orientable)' : 'one (not orientable)'],
+  ]
+  return facts.flatMap(([name, value]) => (value === null || value === '' ? [] : [[name, String(value)]]))
 }
 
 export const Shelf = () => {
@@ -225,6 +247,10 @@ export const Shelf = () => {
           )}
         </div>
         <Filters />
+        <div class="row">
+          <OpenModelButton />
+          <span class="soft">OBJ, STL or PLY; or drop the file on this page.</span>
+        </div>
         {catalogue.value.length === 0 && <p class="soft">Constructing the solids</p>}
         {catalogue.value.length > 0 && shown.value.length === 0 && (
           <p>No solid fits. Take a word away, or search for part of a name.</p>

@@ -1,5 +1,7 @@
 /** The Shelf's filters: each a short word that stands for a plain question about a solid. */
 import type { SolidFacts } from '../../worker'
+import { plural } from '../words/figures'
+import { familyWords } from '../words/solid'
 
 export interface Filter {
   readonly id: string
@@ -15,7 +17,7 @@ export interface FilterGroup {
 
 /** Convex: no star faces, and the faces wind round the middle once. */
 export const isConvex = (solid: SolidFacts): boolean =>
-  solid.density === 1 && solid.facesByKind.every(({ d }) => d === 1)
+  solid.density === 1 && solid.components === 1 && solid.facesByKind.every(({ d }) => d === 1)
 
 const has =
   (kind: string) =>
@@ -34,7 +36,14 @@ const faceKinds = [
   'decagram',
 ]
 
+const families = Object.keys(familyWords) as SolidFacts['family'][]
+
 export const filterGroups: readonly FilterGroup[] = [
+  {
+    name: 'Family',
+    mode: 'any',
+    filters: families.map((each) => ({ id: each, word: familyWords[each], fits: ({ family }) => family === each })),
+  },
   {
     name: 'Shape',
     mode: 'any',
@@ -58,12 +67,13 @@ export const filterGroups: readonly FilterGroup[] = [
       { id: 'tetrahedral', word: 'tetrahedron', fits: ({ symmetry }) => symmetry.startsWith('T') },
       { id: 'octahedral', word: 'cube', fits: ({ symmetry }) => symmetry.startsWith('O') },
       { id: 'icosahedral', word: 'icosahedron', fits: ({ symmetry }) => symmetry.startsWith('I') },
+      { id: 'axial', word: 'one axis', fits: ({ symmetry }) => symmetry.startsWith('D') },
     ],
   },
   {
     name: 'With',
     mode: 'all',
-    filters: faceKinds.map((kind) => ({ id: kind, word: `${kind}s`, fits: has(kind) })),
+    filters: faceKinds.map((kind) => ({ id: kind, word: plural(kind), fits: has(kind) })),
   },
   {
     name: 'Faces',

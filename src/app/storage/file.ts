@@ -55,12 +55,16 @@ const isPlan = (value: unknown): value is Plan =>
   isRecord(value.docket) &&
   ['panels', 'creases', 'pieces', 'sheets', 'steps'].every((name) => Array.isArray(value[name]))
 
+const later = ['nets', 'closeBelowMm']
 const isChoices = (value: unknown): value is PlanChoices => {
   if (!isRecord(value)) return false
   const { heightMm } = limits
   const height = value.heightMm
   return (
-    Object.entries(firstChoices('')).every(([name, example]) => typeof value[name] === typeof example) &&
+    // Choices that came later may be missing in a file of before.
+    Object.entries(firstChoices('')).every(
+      ([name, example]) => typeof value[name] === typeof example || (value[name] === undefined && later.includes(name)),
+    ) &&
     typeof height === 'number' &&
     height >= heightMm.least &&
     height <= heightMm.most

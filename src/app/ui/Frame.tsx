@@ -10,6 +10,7 @@ import { Builds } from './Builds'
 import { useApp } from './context'
 import { Docket } from './Docket'
 import { Help } from './Help'
+import { OpenModelDialog, useDrop } from './OpenModel'
 import { PlanBar } from './PlanBar'
 import { usePlansToPrint } from './plans-to-print'
 
@@ -72,6 +73,7 @@ export const Frame = () => {
   const name = nameOfBuild(app)
   const main = useRef<HTMLElement>(null)
   const first = useRef(true)
+  useDrop()
 
   useEffect(() => {
     document.title = `${stationNames[station]}, ${name}: Facetwright`
@@ -176,6 +178,7 @@ export const Frame = () => {
       <div class="unseen" role="status" aria-live="polite" data-testid="spoken">
         {app.spoken.value}
       </div>
+      <OpenModelDialog />
       {dialog.value === 'builds' && (
         <Builds
           onClose={() => {

@@ -28,10 +28,20 @@ export const openFile = async (app: AppContext, file: File): Promise<boolean> =>
   try {
     const opened = readFileText(file.name, await file.text())
     const plans = opened.kind === 'plan' ? [opened.plan] : Object.values(opened.plans)
-    const catalogue = await app.press.catalogue()
+    const catalogue = await app.press.catalogue('all')
+    const model = opened.kind === 'build' ? opened.build.model : undefined
+    if (model) {
+      const kept = await app.press.keepModel(model)
+      if (!kept.ok) throw new InputError(`${file.name}: ${kept.refusal.message}`, file.name)
+    }
     for (const plan of plans) {
-      if (catalogue.ok && !catalogue.value.some(({ id }) => id === plan.model.id))
-        throw new InputError(`${file.name} is of a solid that this program does not know: ${plan.model.id}.`, file.name)
+      if (catalogue.ok && plan.model.id !== model?.id && !catalogue.value.some(({ id }) => id === plan.model.id))
+        throw new InputError(
+          plan.model.id.startsWith('own-')
+            ? `${file.name} is the plan of a model from a file, and does not hold the model. Open the model, or the build file.`
+            : `${file.name} is of a solid that this program does not know: ${plan.model.id}.`,
+          file.name,
+        )
       const answer = await app.press.check(plan)
       if (!answer.ok) throw new InputError(`${file.name} cannot be used: ${answer.refusal.message}`, file.name)
       const failed = answer.value.filter(({ ok }) => !ok)

@@ -1,7 +1,7 @@
 import type { ReadonlySignal, Signal } from '@preact/signals'
 import { createContext } from 'preact'
 import { useContext } from 'preact/hooks'
-import type { Press, SolidFacts } from '../../worker'
+import type { Planner, Press, SolidFacts } from '../../worker'
 import type { Router } from '../route'
 import type { Workshop } from '../state/workshop'
 import type { Prefs } from './prefs'
@@ -17,6 +17,8 @@ export const nothingPointed: Pointed = { piece: null, panel: null }
 export interface AppContext {
   readonly workshop: Workshop
   readonly press: Press
+  /** Reads models beside whatever the workshop computes. */
+  readonly reader: Planner
   readonly router: Router
   readonly prefs: Prefs
   /** Empty until the worker has answered. */

@@ -4,11 +4,13 @@ import type { SolidFacts } from '../../worker'
 import { papers } from '../state/choices'
 import type { KnownFacts } from '../storage/types'
 import { heightForWidth, narrowest, sayNarrowest } from './craft'
-import { counted, figure, listed, mmText } from './figures'
+import { counted, figure, listed, mmText, plural } from './figures'
 
 export const sayHeight = (solid: SolidFacts | null, choices: PlanChoices, known: KnownFacts | undefined): string => {
   const parts: string[] = []
-  if (solid) parts.push(`Edge ${mmText(choices.heightMm / (2 * solid.circumradius))}.`)
+  // A dual's edges differ in length; a model's own scale means nothing here.
+  if (solid && solid.family !== 'dual' && solid.family !== 'own')
+    parts.push(`Edge ${mmText(choices.heightMm / (2 * solid.circumradius))}.`)
   if (known) {
     const width = known.narrowest * choices.heightMm
     parts.push(`Narrowest panel ${mmText(width)}: ${sayNarrowest(width)}.`)
@@ -39,15 +41,36 @@ export const sayHand = (hand: PlanChoices['hand']): string =>
 
 export const sayColours = (colours: PlanChoices['colours'], solid: SolidFacts | null): string => {
   const kinds = solid?.facesByKind.map(({ name }) => name) ?? []
-  if (kinds.length === 1) return `All faces are ${kinds[0]}s: one card either way.`
+  if (kinds.length === 1)
+    return solid?.family === 'own'
+      ? 'The model has one colour.'
+      : `All faces are ${plural(kinds[0]!)}: one card either way.`
   if (colours === 'one') return 'Face kinds may hang together in one piece: fewer pieces and seams.'
-  return `Sheets of ${listed(kinds.map((kind) => `${kind}s`))} on their own card; every piece is of one kind.`
+  return `Sheets of ${listed(kinds.map(plural))} on their own card; every piece is of one kind.`
 }
 
 export const saySide = (side: PlanChoices['side']): string =>
   side === 'outside'
     ? 'Lines show on the finished model: for white card printed in colour.'
     : 'Sheets are mirror images; lines and labels end up inside. For card that is dyed through.'
+
+/** Each seam has a tab on the piece that is glued earlier, whatever the way. */
+export const sayCut = (nets: NonNullable<PlanChoices['nets']>): string =>
+  ({
+    fewest:
+      'Panels stay joined as long as the net lies flat, does not overlap itself and fits the sheet: least gluing.',
+    repeat: 'One net, or a few, many times over by symmetry: cut them alike and learn one fold.',
+    modules: 'Each spike or pit is cut for itself; they meet along their rims.',
+    single: 'Every panel for itself: for card of many colours.',
+  })[nets]
+
+/** What closing up has done, or would do. */
+export const sayClosed = (plan: Plan | null, below: number): string => {
+  if (below === 0) return '0 closes none.'
+  const closed = plan?.docket.closed
+  if (!closed || closed.belowMm !== below) return 'Short edges are drawn together to a point; the skin stays closed.'
+  return `${counted(closed.stretches, 'stretch', 'stretches')} closed up; no corner moved more than ${figure(closed.movedMm, 2)} mm, panels are flat within ${figure(closed.offPlaneMm, 2)} mm.`
+}
 
 /** What the nets came to; null without a plan. */
 export const sayNets = (plan: Plan | null): string | null => {

@@ -1,4 +1,5 @@
 /** The docket: the same facts in the same order, each with what it means for the builder. */
+import { holdWords, partWords } from '../../drawing'
 import type { Plan, PlanChoices } from '../../plan/types'
 import { papers } from '../state/choices'
 import { narrowest, sayAngle, sayHours, sayNarrowestAt, spareSheets } from './craft'
@@ -98,15 +99,17 @@ export const docketFacts = (plan: Plan, choices: PlanChoices): Fact[] => {
       id: 'line',
       name: 'Held along a line',
       value: counted(docket.lineContacts, 'stretch', 'stretches'),
-      meaning:
-        docket.lineContacts === 0 ? 'no weak stretches' : 'the skin crosses there; let it set before you handle it',
+      meaning: holdWords(docket),
       caution: docket.lineContacts > 0,
     },
     {
       id: 'bodies',
       name: 'Bodies',
       value: counted(docket.bodies, 'closed part'),
-      meaning: docket.bodies === 1 ? 'one hollow inside' : 'they touch along lines or at points only',
+      meaning:
+        partWords(plan).join('; ') ||
+        (docket.bodies === 1 ? 'one hollow inside' : 'they touch along lines or at points only'),
+      caution: (docket.parts?.length ?? 0) > 0,
     },
     {
       id: 'checks',

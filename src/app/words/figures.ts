@@ -22,6 +22,9 @@ export const areaText = (mm2: number): string =>
 export const percentText = (fraction: number): string => `${Math.round(fraction * 100)} %`
 export const degreesText = (degrees: number): string => `${figure(degrees, degrees < 100 ? 1 : 0)}°`
 
+/** More than one of a face kind: triangles, rhombi, crossed hexagons. */
+export const plural = (kind: string): string => (kind.endsWith('rhombus') ? `${kind.slice(0, -2)}i` : `${kind}s`)
+
 /** `1 sheet`, `2 sheets`. */
 export const counted = (count: number, one: string, many = `${one}s`): string => `${count} ${count === 1 ? one : many}`
 

@@ -2,7 +2,7 @@
 import type { SolidFacts } from '../../worker'
 import type { KnownFacts } from '../storage/types'
 import { heightForWidth, narrowest } from './craft'
-import { counted, figure, hoursText, listed } from './figures'
+import { counted, figure, hoursText, listed, plural } from './figures'
 
 const symmetryWords: Readonly<Record<string, string>> = {
   T_d: 'full tetrahedral',
@@ -15,11 +15,25 @@ const symmetryWords: Readonly<Record<string, string>> = {
 
 export const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1)
 
-export const saySymmetry = (symbol: string): string =>
-  symmetryWords[symbol] ? `${symmetryWords[symbol]} (${symbol})` : symbol
+export const saySymmetry = (symbol: string): string => {
+  const axis = /^D_(\d+)([hd])$/.exec(symbol)
+  if (axis)
+    return `${axis[1]}-fold about one axis, ${axis[2] === 'h' ? 'top and bottom alike' : 'top and bottom turned'} (${symbol})`
+  return symmetryWords[symbol] ? `${symmetryWords[symbol]} (${symbol})` : symbol
+}
+
+/** Groups of the Shelf, as they stand in lists. */
+export const familyWords: Readonly<Record<SolidFacts['family'], string>> = {
+  uniform: 'uniform',
+  prism: 'prisms',
+  antiprism: 'antiprisms',
+  dual: 'duals',
+  compound: 'compounds',
+  own: 'own models',
+}
 
 export const sayFaces = ({ facesByKind }: SolidFacts): string =>
-  listed(facesByKind.map(({ name, count }) => counted(count, name)))
+  listed(facesByKind.map(({ name, count }) => counted(count, name, plural(name))))
 
 /** A name that may be broken between its roots, where a narrow card needs it (soft hyphens). */
 export const breakable = (name: string): string =>

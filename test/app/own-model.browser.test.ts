@@ -1,0 +1,166 @@
+/** A builder's own model, from the file to the Bench and back from the store; and what is wrong with a file. */
+import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs'
+import { tmpdir } from 'node:os'
+import { join } from 'node:path'
+import type { Browser, Page } from 'playwright-core'
+import { afterAll, beforeAll, expect, test } from 'vitest'
+import { launch } from '../browser/chromium'
+import { serveApp } from '../browser/serve'
+import { goTo, noComplaints, openApp, planReady, takeToBoard } from './open-app'
+
+/** A square pyramid with its base as two triangles; one unit is an inch. */
+const pyramid = `# demo
+v 0 0 0
+v 2 0 0
+v 2 2 0
+v 0 2 0
+v 1 1 1.5
+f 1 3 2
+f 1 4 3
+f 1 2 5
+f 2 3 5
+f 3 4 5
+f 4 1 5
+`
+const folder = mkdtempSync(join(tmpdir(), 'facetwright-own-'))
+const fileOf = (name: string, text: string): string => {
+  const path = join(folder, name)
+  writeFileSync(path, text)
+  return path
+}
+let browser: Browser
+let app: Awaited<ReturnType<typeof serveApp>>
+beforeAll(async () => {
+  app = await serveApp()
+  browser = await launch('no-3d')
+})
+afterAll(async () => {
+  await browser?.close()
+  await app?.close()
+  rmSync(folder, { recursive: true, force: true })
+})
+
+test('picked, sized by its unit, planned, still there after a reload, and saved with its build', async () => {
+  const { context, page, complaints } = await openApp(browser, app.url, 'no-3d')
+  await page.getByTestId('open-model').setInputFiles(fileOf('roof.obj', pyramid))
+  const dialog = page.locator('dialog')
+  await dialog.getByText('6 faces, 5 vertices').waitFor()
+  await dialog.getByRole('radio', { name: 'as it is in the file' }).check()
+  await dialog.getByRole('combobox').selectOption('in')
+  // The base's corners and the tip lie on a sphere: its radius is 2 / (2 · 1.5) + 1.5 / 2 = 17/12 in, so 71.97 mm across.
+  await dialog.getByText('Then it is 72 mm high.').waitFor()
+  await dialog.getByRole('button', { name: 'Take to the Board' }).click()
+  await page.locator('main[data-station=board]').waitFor()
+  await planReady(page)
+  expect(await page.locator('.build-name').textContent()).toContain('roof')
+  await goTo(page, 'Bench')
+  await page.getByRole('button', { name: 'Glued', exact: true }).click()
+  await page.locator('.bench[data-glued="1"]').waitFor()
+  await page.locator('.save-state', { hasText: 'Saved here' }).waitFor()
+  await page.reload()
+  await page.locator('.bench[data-glued="1"]').waitFor()
+  expect(await page.locator('.build-name').textContent()).toContain('roof')
+
+  // Another size can still be planned: the model itself was kept.
+  await goTo(page, 'Board')
+  await page.getByLabel('Height, across the vertices').fill('150')
+  await page.getByLabel('Height, across the vertices').press('Enter')
+  await planReady(page)
+
+  // The build's file holds it, and is opened by dropping it on the page.
+  await page.locator('.build-name').click()
+  const [file] = await Promise.all([
+    page.waitForEvent('download'),
+    page.getByRole('button', { name: 'Save this build to a file' }).click(),
+  ])
+  const saved = join(folder, 'saved-build.json')
+  await file.saveAs(saved)
+  const text = readFileSync(saved, 'utf8')
+  expect(JSON.parse(text).build.model.vertices.length).toBe(5)
+  await context.close()
+
+  const other = await openApp(browser, app.url, 'no-3d')
+  await drop(other.page, 'saved-build.json', text)
+  await other.page.locator('.build-name', { hasText: 'roof' }).waitFor()
+  await goTo(other.page, 'Board')
+  await planReady(other.page)
+  await other.context.close()
+  noComplaints(complaints)
+  noComplaints(other.complaints)
+})
+
+/** Drops a file in the middle of the page. */
+const drop = async (page: Page, name: string, text: string): Promise<void> => {
+  await page.locator('main').waitFor()
+  await page.evaluate(
+    ([fileName, content]) => {
+      const data = new DataTransfer()
+      data.items.add(new File([content], fileName))
+      const target = document.querySelector('main')!
+      for (const type of ['dragover', 'drop'])
+        target.dispatchEvent(new DragEvent(type, { bubbles: true, cancelable: true, dataTransfer: data }))
+    },
+    [name, text] as const,
+  )
+}
+
+test('what is wrong with a file is said with its place, and nothing is lost', async () => {
+  const { context, page, complaints } = await openApp(browser, app.url, 'no-3d')
+  await takeToBoard(page, 'tetrahedron')
+  await planReady(page)
+  // One face left out: the base is half open.
+  await drop(page, 'open.obj', pyramid.replace('f 1 4 3\n', ''))
+  const dialog = page.locator('dialog')
+  await dialog.getByRole('alert').waitFor()
+  const told = await dialog.getByRole('alert').textContent()
+  expect(told).toContain('open.obj')
+  expect(told).toMatch(/line \d+/)
+  await dialog.getByText('Nothing has been changed.').waitFor()
+  await page.keyboard.press('Escape')
+  await dialog.waitFor({ state: 'detached' })
+  expect(await page.locator('.build-name').textContent()).toContain('tetrahedron')
+
+  // A file that is refused by its size is never read.
+  await page.evaluate(() => {
+    const huge = new File(['v 0 0 0'], 'huge.stl')
+    Object.defineProperty(huge, 'size', { value: 2 ** 31 })
+    Object.defineProperty(huge, 'arrayBuffer', {
+      value: () => {
+        throw new Error('read all the same')
+      },
+    })
+    const data = { types: ['Files'], files: [huge] }
+    const event = new Event('drop', { bubbles: true, cancelable: true })
+    Object.defineProperty(event, 'dataTransfer', { value: data })
+    document.querySelector('main')!.dispatchEvent(event)
+  })
+  const size = await dialog.getByRole('alert').textContent()
+  expect(size).toContain('huge.stl')
+  expect(size).not.toContain('read all the same')
+  await page.keyboard.press('Escape')
+  noComplaints(complaints)
+  await context.close()
+})
+
+test('families on the Shelf; slivers are proposed to be closed up', async () => {
+  const { context, page, complaints } = await openApp(browser, app.url, 'no-3d')
+  await page.getByRole('button', { name: 'antiprisms', exact: true }).click()
+  await page.locator('[data-solid="heptagrammic-7-3-antiprism"]').waitFor()
+  expect(await page.locator('.cards li').count()).toBe(117)
+  await page.getByRole('button', { name: 'antiprisms', exact: true }).click()
+  await page.getByRole('button', { name: 'duals', exact: true }).click()
+  await page.locator('[data-solid="rhombic-triacontahedron"]').click()
+  await page.getByText('30 rhombi').waitFor()
+  await page.locator('[data-looked]').getByRole('button', { name: 'Take to the Board' }).click()
+  await planReady(page)
+
+  await goTo(page, 'Shelf')
+  await page.getByRole('button', { name: 'Show all' }).click()
+  await takeToBoard(page, 'inverted snub dodecadodecahedron')
+  await planReady(page)
+  await page.getByText('60 stretches shorter than 0.3 mm').waitFor()
+  await page.getByRole('button', { name: 'Close them up' }).click()
+  await page.getByText('60 stretches closed up').waitFor({ timeout: 120_000 })
+  noComplaints(complaints)
+  await context.close()
+})
