@@ -100,7 +100,7 @@ const Colours = () => {
           <div key={name} class="tint">
             <Swatch kind={name} tints={tints} />
             <label>
-              {plural(name)}
+              {name === 'card' ? name : plural(name)}
               <input
                 type="color"
                 value={colourOf(name, tints)}

@@ -116,10 +116,11 @@ const Read = ({ model: { solid, farthest, notes } }: { model: ReadModel }) => {
   const byUnit = 2 * farthest * (modelUnits[unit.value as keyof typeof modelUnits] ?? 1)
   const inRange = byUnit >= least && byUnit <= most
   const heightMm =
-    way.value === 'unit' ? (inRange ? Math.round(byUnit * 1e6) / 1e6 : null) : 'value' in read ? read.value : null
+    way.value === 'unit' ? (inRange ? Math.round(byUnit * 100) / 100 : null) : 'value' in read ? read.value : null
   const components = solid.components ? new Set(solid.components).size : 1
   return (
     <form
+      class="own-model"
       onSubmit={async (event) => {
         event.preventDefault()
         if (heightMm === null) return
