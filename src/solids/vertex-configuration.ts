@@ -1,7 +1,7 @@
 /** Vertex configurations: the faces round a vertex in order, retrograde ones as n/d with d > n/2. */
 import { cross, dot, normalize, planeFrame, sub, type Vec3 } from '../geometry/vec3'
 import type { Solid } from './types'
-import { cornersOf, ringOf } from './vertex-ring'
+import { cornersOf, ringOf, windingOf } from './vertex-ring'
 
 interface Step {
   readonly n: number
@@ -24,23 +24,13 @@ export const vertexConfiguration = (solid: Solid, vertex: number): VertexConfigu
     const d = sub(solid.vertices[q]!, p)
     return Math.atan2(dot(d, v), dot(d, u))
   }
-  const corners = cornersOf(solid, solid.vertices.length)[vertex]!
-  const walk = ringOf(corners, vertex).map(({ face, from, to }) => {
-    let angle = bearing(to) - bearing(from)
-    if (angle <= -Math.PI + 1e-9) angle += 2 * Math.PI
-    if (angle > Math.PI + 1e-9) angle -= 2 * Math.PI
-    return { face, angle }
-  })
-  // Faces through the centre are seen edge-on, as half a turn either way: they decide nothing.
-  const edgeOn = (angle: number): boolean => Math.abs(Math.abs(angle) - Math.PI) < 1e-6
-  const turning = walk.reduce((s, w) => s + (edgeOn(w.angle) ? 0 : w.angle), 0)
-  const sense = turning < -1e-6 ? -1 : 1
-  const windings = Math.max(1, Math.round(Math.abs(turning) / (2 * Math.PI)))
-  const steps = walk.map(({ face, angle }): Step => {
+  const walk = ringOf(cornersOf(solid, solid.vertices.length)[vertex]!, vertex)
+  const { senses, windings } = windingOf(walk, bearing)
+  const steps = walk.map(({ face }, i): Step => {
     const kind = solid.kinds[solid.faces[face]!.kind]!
-    return { n: kind.n, d: kind.d, retrograde: !edgeOn(angle) && angle * sense < 0 }
+    return { n: kind.n, d: kind.d, retrograde: senses[i] === 'backwards' }
   })
-  return { steps, windings }
+  return { steps, windings: Math.max(1, windings) }
 }
 
 const stepText = ({ n, d, retrograde }: Step): string => {
