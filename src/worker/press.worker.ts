@@ -7,7 +7,9 @@ import { planText } from '../plan/file'
 import { validatePlan } from '../plan/validate'
 import { faceItems, renderThumbnail } from '../preview/thumbnail'
 import { buildSolid, findSolids, listFamily, listSolids } from '../solids'
+import { solidParts } from '../solids/parts'
 import type { Solid } from '../solids/types'
+import { vertexFigure } from '../solids/vertex-figure'
 import { answer, answerLater } from './answer'
 import type { PressApi } from './protocol'
 
@@ -37,6 +39,12 @@ const api: PressApi = {
         ...item,
         kind: solid.kinds[Number(item.kind)]!.name,
       }))
+    }),
+  parts: (id, hand) => answer(() => solidParts(solidOf(id, hand))),
+  figures: (id, hand, vertices) =>
+    answer(() => {
+      const solid = solidOf(id, hand)
+      return vertices.map((vertex) => vertexFigure(solid, vertex))
     }),
   picture: (id, colours, size) => {
     const made = answer(() => {

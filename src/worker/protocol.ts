@@ -4,9 +4,13 @@
  */
 import type { Plan, PlanCheck, PlanChoices } from '../plan/types'
 import type { Pixels, SceneItem } from '../preview'
+import type { SolidParts } from '../solids/parts'
 import type { Solid, SolidFacts } from '../solids/types'
+import type { VertexFigure } from '../solids/vertex-figure'
 
+export type { SolidParts } from '../solids/parts'
 export type { Solid, SolidFacts } from '../solids/types'
+export type { VertexFigure } from '../solids/vertex-figure'
 
 /** Why something could not be done. */
 export interface Refusal {
@@ -67,6 +71,10 @@ export interface PressApi {
     fill: PlanChoices['fill'],
     colours: Readonly<Record<string, string>>,
   ): Answer<SceneItem[]>
+  /** Which faces belong together: by kind, by orbit, by vertex. Face indices as in `faces`. */
+  parts(id: string, hand: PlanChoices['hand']): Answer<SolidParts>
+  /** The vertex figures of these vertices. */
+  figures(id: string, hand: PlanChoices['hand'], vertices: readonly number[]): Answer<VertexFigure[]>
   /** A square picture of the raw faces, `size` pixels wide. */
   picture(id: string, colours: Readonly<Record<string, string>>, size: number): Answer<Pixels>
   /** Draws all pages of a plan and keeps them for `page` under this key; the four latest plans are kept. */
