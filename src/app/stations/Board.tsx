@@ -8,6 +8,7 @@ import { factsKey } from '../state/workshop'
 import { nothingPointed, useApp } from '../ui/context'
 import { Group, NumberField, Radios } from '../ui/fields'
 import { ModelView } from '../ui/ModelView'
+import { useParts } from '../ui/ShowAlone'
 import { Swatch } from '../ui/Swatch'
 import { pieceByPanel, planItems } from '../ui/scene'
 import {
@@ -61,8 +62,17 @@ const BoardModel = () => {
       : { groups: new Set([piece!]) }
   }, [plan, panel, piece])
   const name = plan?.model.name ?? solid.value?.name ?? id
+  const parts = useParts(
+    solid.value ? id : null,
+    plan?.model.hand === 'left' || (!plan && hand === 'left') ? 'left' : 'right',
+  )
+  const whole = useMemo(
+    () => parts && (plan ? { parts, facesOf: new Map(plan.panels.map((each) => [each.id, each.faces])) } : { parts }),
+    [parts, plan],
+  )
   return (
     <ModelView
+      whole={whole}
       label={plan ? `The ${name} as it will stand` : `The ${name}, its raw faces`}
       items={items}
       options={options}

@@ -1,5 +1,5 @@
 import { signal, useComputed, useSignal } from '@preact/signals'
-import { useEffect, useMemo, useRef } from 'preact/hooks'
+import { useEffect, useMemo, useRef, useState } from 'preact/hooks'
 import type { SceneItem } from '../../preview'
 import type { SolidFacts } from '../../worker'
 import { colourOf } from '../palette'
@@ -8,6 +8,9 @@ import { useApp } from '../ui/context'
 import { ModelView } from '../ui/ModelView'
 import { OpenModelButton } from '../ui/OpenModel'
 import { Picture } from '../ui/Picture'
+import { useParts } from '../ui/ShowAlone'
+import { showAll } from '../ui/show'
+import { VertexFigure } from '../ui/VertexFigure'
 import { counted, degreesText, figure } from '../words/figures'
 import { breakable, capital, sayFaces, sayKnown, saySymmetry } from '../words/solid'
 import { filterGroups, passes } from './shelf-filter'
@@ -113,6 +116,9 @@ const Looked = ({ solid }: { solid: SolidFacts }) => {
     }
   }, [solid.id, seen])
   const options = useMemo(() => ({ backs: 'same' as const, centre: [0, 0, 0] as [number, number, number] }), [])
+  const parts = useParts(solid.id, seen)
+  const whole = useMemo(() => parts && { parts }, [parts])
+  const [show, setShow] = useState(showAll)
   const known = workshop.known.value.get(factsKey(solid.id, 'nonzero'))
   const isHere = workshop.choices.value.solid === solid.id
   /** A model from a file lives in the build that was begun with it. */
@@ -121,7 +127,13 @@ const Looked = ({ solid }: { solid: SolidFacts }) => {
   return (
     <section class="looked" aria-label={capital(solid.name)} data-looked={solid.id}>
       <h2 tabIndex={-1}>{capital(solid.name)}</h2>
-      <ModelView label={`The ${solid.name}, its raw faces`} items={items.value} options={options} />
+      <ModelView
+        label={`The ${solid.name}, its raw faces`}
+        items={items.value}
+        options={options}
+        whole={whole}
+        onShow={setShow}
+      />
       {solid.chiral && (
         <fieldset class="row tight">
           <legend>Hand</legend>
@@ -180,6 +192,7 @@ const Looked = ({ solid }: { solid: SolidFacts }) => {
           </>
         )}
       </dl>
+      <VertexFigure solid={solid.id} hand={seen} parts={parts} vertex={show.what === 'vertex' ? show.vertex : null} />
       {solid.notes.map((note) => (
         <p key={note} class="so">
           {note}

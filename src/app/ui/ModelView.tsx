@@ -1,4 +1,4 @@
-/** The 3D view with its controls: turn, zoom, pull apart, show one face kind alone. */
+/** The 3D view with its controls: turn, zoom, pull apart, show a part alone. */
 import { useEffect, useMemo, useRef, useState } from 'preact/hooks'
 import {
   createPreview,
@@ -10,10 +10,9 @@ import {
   type SceneOptions,
   type SeamLine,
 } from '../../preview'
-import { counted } from '../words/figures'
 import { useApp } from './context'
-import { Swatch } from './Swatch'
-import { kindsOf } from './scene'
+import { ShowAlone } from './ShowAlone'
+import { type Show, showAll, shownItems, type Whole } from './show'
 
 export interface ModelViewProps {
   /** Accessible name. */
@@ -30,7 +29,14 @@ export interface ModelViewProps {
   /** Pull apart panels or whole pieces. */
   readonly apart?: 'panels' | 'pieces'
   readonly view?: { current: Preview | null }
+  /** The solid that the items are of, so that orbits and vertices can be shown alone too; face kinds always can. */
+  readonly whole?: Whole | null
+  /** What is shown alone, whenever that changes. */
+  readonly onShow?: (show: Show) => void
 }
+
+const both = (a: ReadonlySet<number> | null, b: ReadonlySet<number> | null): ReadonlySet<number> | null =>
+  a === null ? b : b === null ? a : new Set([...a].filter((id) => b.has(id)))
 
 const themeNow = (): PreviewTheme => {
   const style = getComputedStyle(document.documentElement)
@@ -48,7 +54,7 @@ export const ModelView = (props: ModelViewProps) => {
   const host = useRef<HTMLDivElement>(null)
   const [view, setView] = useState<Preview | null>(null)
   const [apart, setApart] = useState(0)
-  const [alone, setAlone] = useState<string | null>(null)
+  const [wanted, setWanted] = useState<Show>(showAll)
   const mode = prefs.view.value
   const dark = prefs.isDark.value
   const pick = useRef(props.onPick)
@@ -76,17 +82,26 @@ export const ModelView = (props: ModelViewProps) => {
   useEffect(() => view?.setScene(props.items, { explodeBy: by, ...props.options }), [view, props.items, by])
   useEffect(() => view?.setTheme(themeNow()), [view, dark])
   useEffect(() => view?.setLabel(props.label), [view, props.label])
-  useEffect(() => view?.setVisibleItems(props.visible ?? null), [view, props.items, props.visible])
-  useEffect(() => view?.setGhost(props.ghost ?? null), [view, props.items, props.ghost])
+  const { items } = props
+  const whole = props.whole ?? null
+  const show = standing(wanted, items, whole)
+  const only = useMemo(() => shownItems(show, items, whole), [show, items, whole])
+  const visible = useMemo(() => both(only, props.visible ?? null), [only, props.visible])
+  const ghost = useMemo(() => props.ghost && both(props.ghost, only), [only, props.ghost])
+  useEffect(() => view?.setVisibleItems(visible), [view, items, visible])
+  useEffect(() => view?.setGhost(ghost ?? null), [view, items, ghost])
   useEffect(() => view?.setLit(props.lit ?? null), [view, props.items, props.lit])
   useEffect(() => view?.setSeams(props.seams ?? []), [view, props.items, props.seams])
   useEffect(() => view?.setExplode(apart), [view, props.items, apart])
-  const kinds = useMemo(() => kindsOf(props.items), [props.items])
-  const shown = kinds.some(({ kind }) => kind === alone) ? alone : null
-  useEffect(() => view?.setVisibleKinds(shown === null ? null : new Set([shown])), [view, props.items, shown])
   useEffect(() => {
     if (view && props.look) view.lookAt(props.look.direction, 300)
   }, [view, props.look?.key])
+  const vertex = show.what === 'vertex' ? (whole?.parts.vertices[show.vertex] ?? null) : null
+  useEffect(() => {
+    if (view && vertex && Math.hypot(...vertex) > 0) view.lookAt(vertex, 300)
+  }, [view, vertex])
+  const { onShow } = props
+  useEffect(() => onShow?.(show), [show])
 
   return (
     <div class="model-view">
@@ -115,33 +130,15 @@ export const ModelView = (props: ModelViewProps) => {
             Reset<span class="unseen"> the view</span>
           </button>
         </div>
-        {kinds.length > 1 && (
-          <fieldset class="row tight kinds">
-            <legend class="unseen">Show one face kind alone</legend>
-            <button type="button" class="quiet" aria-pressed={shown === null} onClick={() => setAlone(null)}>
-              All
-            </button>
-            {kinds.map(({ kind, panels }) => (
-              <button
-                key={kind}
-                type="button"
-                class="quiet kind"
-                aria-pressed={shown === kind}
-                aria-label={`Only ${kind} (${counted(panels, 'part')})`}
-                onClick={() => setAlone(shown === kind ? null : kind)}
-              >
-                <Swatch kind={kind} tints={tintsOf(props.items, kind)} />
-                {kind}
-              </button>
-            ))}
-          </fieldset>
-        )}
+        <ShowAlone items={items} whole={whole} show={show} onShow={setWanted} />
       </div>
     </div>
   )
 }
 
-const tintsOf = (items: readonly SceneItem[], kind: string): Record<string, string> => {
-  const item = items.find((entry) => entry.kind === kind)
-  return item ? { [kind]: item.colour } : {}
+/** What was asked for, as far as this model has it. */
+const standing = (asked: Show, items: readonly SceneItem[], whole: Whole | null): Show => {
+  if (asked.what === 'kind') return items.some(({ kind }) => kind === asked.kind) ? asked : showAll
+  if (asked.what === 'vertex') return whole && asked.vertex < whole.parts.vertices.length ? asked : showAll
+  return asked
 }

@@ -23,10 +23,11 @@ export const planItems = (plan: Plan, tints: Readonly<Record<string, string>>): 
 export interface KindShown {
   readonly kind: string
   readonly panels: number
+  readonly colour: string
 }
 /** Face kinds of a scene, in the order of first appearance. */
 export const kindsOf = (items: readonly SceneItem[]): KindShown[] => {
-  const counts = new Map<string, number>()
-  for (const { kind } of items) counts.set(kind, (counts.get(kind) ?? 0) + 1)
-  return [...counts].map(([kind, panels]) => ({ kind, panels }))
+  const kinds = new Map<string, KindShown>()
+  for (const { kind, colour } of items) kinds.set(kind, { kind, panels: (kinds.get(kind)?.panels ?? 0) + 1, colour })
+  return [...kinds.values()]
 }
