@@ -177,17 +177,22 @@ export const arrange = (
     cells,
     crossers: Int32Array.from(crossers),
     crossersFrom: Int32Array.from(crossersFrom),
-    halfEdge: (a, b) => {
-      const start = outgoing[a]!
-      for (let h = start; h >= 0; ) {
-        if (origins[h ^ 1] === b) return h
-        h = next[h ^ 1]!
-        if (h === start) break
-      }
-      return -1
-    },
+    halfEdge: edgeFinder(origins, next, outgoing),
   }
 }
+
+/** Made apart from `arrange`, so that it does not keep alive all that was needed on the way. */
+const edgeFinder =
+  (origin: Int32Array, next: Int32Array, outgoing: Int32Array): Arrangement['halfEdge'] =>
+  (a, b) => {
+    const start = outgoing[a]!
+    for (let h = start; h >= 0; ) {
+      if (origin[h ^ 1] === b) return h
+      h = next[h ^ 1]!
+      if (h === start) break
+    }
+    return -1
+  }
 
 const mergeCuts = (cuts: readonly PlaneCut[]): PlaneCut => ({
   segments: cuts.flatMap((c) => c.segments),
