@@ -127,6 +127,10 @@ export const skinWithin = (solid: Solid, fill: FillRule, tolerance: Tolerance, p
     (done) => progress('skin', 0.8 + 0.1 * done),
   )
   progress('skin', 0.9)
+  // Of a large mesh these are most of what is held, and nothing needs them any more.
+  arrangements.clear()
+  faces.length = 0
+  ownFaces.length = 0
   const slack = solid.precision === undefined ? 0 : tolerance.merge
   return assemble(solid, fill, raw, points, slack, (done) => progress('skin', 0.9 + 0.08 * done))
 }

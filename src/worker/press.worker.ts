@@ -1,6 +1,7 @@
 /** Draws: pictures of solids, pages, and the PDF. */
 import { expose, transfer } from 'comlink'
 import { type DrawingPage, drawPlan } from '../drawing'
+import { InputError } from '../errors'
 import { checkedModel, modelFacts } from '../models/stored'
 import { pageToSvg, writePdf } from '../output'
 import { planText } from '../plan/file'
@@ -19,6 +20,9 @@ const keepAtMost = 4
 const coloursOf = (solid: Solid, colours: Readonly<Record<string, string>>): string[] =>
   solid.kinds.map(({ name }) => colours[name] ?? '#c8c2b8')
 
+/** Raw faces cost the page ten kilobytes each on their way; of a larger model only the skin is shown. */
+const mostRaw = 4000
+
 /** Builders' models by id. */
 const models = new Map<string, Solid>()
 const solidOf = (id: string, hand?: 'left' | 'right'): Solid => models.get(id) ?? buildSolid(id, hand)
@@ -35,6 +39,7 @@ const api: PressApi = {
   faces: (id, hand, fill, colours) =>
     answer(() => {
       const solid = solidOf(id, hand)
+      if (solid.faces.length > mostRaw) return []
       return faceItems(solid, coloursOf(solid, colours), fill).map((item) => ({
         ...item,
         kind: solid.kinds[Number(item.kind)]!.name,
@@ -49,6 +54,7 @@ const api: PressApi = {
   picture: (id, colours, size) => {
     const made = answer(() => {
       const solid = solidOf(id)
+      if (solid.faces.length > mostRaw) throw new InputError('Too many faces for a small picture.', 'model')
       return renderThumbnail(faceItems(solid, coloursOf(solid, colours)), { size, direction: [0.42, 0.31, 1] })
     })
     return made.ok ? transfer(made, [made.value.data.buffer]) : made

@@ -64,7 +64,7 @@ export interface PressApi {
   keepModel(model: unknown): Answer<SolidFacts>
   /** Ids, best match first. */
   find(query: string): Answer<string[]>
-  /** The raw faces as scene items: id = face index, kind = name of the face kind. */
+  /** The raw faces as scene items: id = face index, kind = name of the face kind; none of a model of thousands of faces. */
   faces(
     id: string,
     hand: PlanChoices['hand'],
