@@ -55,7 +55,7 @@ export const ShowAlone = ({ items, whole, show, onShow }: Props) => {
               type="button"
               class="quiet kind"
               aria-pressed={isShown}
-              aria-label={`Only ${plural(kind)} (${counted(panels, whole && !whole.facesOf ? 'face' : 'part')})`}
+              aria-label={`Only ${plural(kind)} (${counted(panels, whole && !whole.facesOf ? 'face' : 'panel')})`}
               onClick={() => onShow(isShown ? showAll : { what: 'kind', kind, orbit: null })}
             >
               <Swatch kind={kind} tints={{ [kind]: colour }} />

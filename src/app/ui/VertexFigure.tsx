@@ -2,14 +2,14 @@
 import { useEffect, useMemo, useState } from 'preact/hooks'
 import type { VertexFigure as Figure, SolidParts } from '../../worker'
 import { counted } from '../words/figures'
-import { nameFigure, sayFacesRound, sayFigure, sayLengths } from '../words/vertex'
+import { isNumbered, nameFigure, sayFacesRound, sayFigure, sayLengths, sayLines } from '../words/vertex'
 import { useApp } from './context'
+import { letter, placeLabels, type Segment } from './figure-labels'
 import { vertexSorts } from './show'
 
 /** So many sorts of vertices are drawn side by side; a model with more shows the figure of the vertex that stands alone. */
 const atMost = 6
-/** Sides beyond this number carry no words but `back`. */
-const wordsUpTo = 12
+type Side = NonNullable<Figure['figure']>['rings'][number]['sides'][number]
 
 interface Props {
   readonly solid: string
@@ -37,6 +37,7 @@ export const VertexFigure = ({ solid, hand, parts, vertex }: Props) => {
   }, [key])
   if (!parts) return null
   const drawn = vertex === null ? withoutMirrorImages(figures) : figures
+  const legend = sayLines(drawn)
   return (
     <details class="vertex-figures" open={matchMedia('(min-width: 801px)').matches}>
       <summary>Vertex figure</summary>
@@ -56,11 +57,7 @@ export const VertexFigure = ({ solid, hand, parts, vertex }: Props) => {
           </figcaption>
         </figure>
       ))}
-      {drawn.some(({ figure }) =>
-        figure?.rings.some(({ sides }) => sides.some(({ sense }) => sense !== 'forward')),
-      ) && (
-        <p class="so">Solid line: forward. Dashed: backwards. Dotted: a face that contains the axis, seen edge-on.</p>
-      )}
+      {legend !== '' && <p class="so">{legend}</p>}
     </details>
   )
 }
@@ -80,41 +77,50 @@ const withoutMirrorImages = (figures: readonly Figure[]): Figure[] => {
   return figures.filter((figure) => !seen.has(key(figure)) && seen.add(key(figure)))
 }
 
+/** Half width and half height of the drawing; the figure fills a circle of 100. */
+const frame = [150, 126] as const
+
+/** Words beside the sides: names where there is room for them, else numbers as in the caption; none where all are alike. */
+const textsOf = (sides: readonly Side[]): string[] => {
+  const isMixed = new Set(sides.map(({ name }) => name)).size > 1
+  const numbered = isNumbered(sides)
+  return sides.map(({ name, sense }, i) =>
+    [isMixed ? (numbered ? `${i + 1}` : name) : '', sense === 'backwards' ? 'back' : ''].filter(Boolean).join(' '),
+  )
+}
+
 const Drawing = ({ figure: whole }: { figure: Figure }) => {
-  const { rings } = whole.figure!
-  const points = rings.flatMap(({ sides }) => sides.map(({ from }) => from))
-  const reach = Math.max(...points.map(([x, y]) => Math.hypot(x, y)))
-  // The figure is drawn within a circle of 100, its labels beside the sides.
-  const at = ([x, y]: readonly [number, number]): [number, number] => [(100 * x) / reach, (-100 * y) / reach]
-  const count = rings.reduce((sum, { sides }) => sum + sides.length, 0)
+  const sides = whole.figure!.rings.flatMap((ring) => ring.sides)
+  const reach = Math.max(...sides.map(({ from }) => Math.hypot(...from)))
+  // The longest side lies level, below the axis.
+  const longest = sides.reduce((best, side) => (side.length > best.length * (1 + 1e-6) ? side : best))
+  const [ux, uy] = [longest.to[0] - longest.from[0], longest.to[1] - longest.from[1]].map(
+    (x) => x / longest.length,
+  ) as [number, number]
+  const at = ([x, y]: readonly [number, number]): [number, number] => [
+    (100 * (x * ux + y * uy)) / reach,
+    (-100 * (y * ux - x * uy)) / reach,
+  ]
+  const lines = sides.map(({ from, to }): Segment => [at(from), at(to)])
   return (
-    <svg class="vertex-figure" role="img" aria-label={nameFigure(whole)} viewBox="-140 -126 280 252">
-      {rings.flatMap(({ sides }, ring) =>
-        sides.map(({ from, to, sense }, i) => {
-          const [[x1, y1], [x2, y2]] = [at(from), at(to)]
-          return <line key={`${ring} ${i}`} class={sense} x1={x1} y1={y1} x2={x2} y2={y2} />
-        }),
-      )}
+    <svg
+      class="vertex-figure"
+      role="img"
+      aria-label={nameFigure(whole)}
+      viewBox={`${-frame[0]} ${-frame[1]} ${2 * frame[0]} ${2 * frame[1]}`}
+    >
+      {lines.map(([[x1, y1], [x2, y2]], i) => (
+        <line key={`${x1} ${y1} ${x2} ${y2}`} class={sides[i]!.sense} x1={x1} y1={y1} x2={x2} y2={y2} />
+      ))}
       <path class="axis" d="M-5 0H5M0 -5V5" />
-      {points.map((p) => {
-        const [x, y] = at(p)
-        return <circle key={`${x} ${y}`} cx={x} cy={y} r="3" />
-      })}
-      {rings.flatMap(({ sides }, ring) =>
-        sides.map(({ from, to, sense, name }, i) => {
-          const words = [count <= wordsUpTo ? name : '', sense === 'backwards' ? 'back' : ''].filter(Boolean).join(' ')
-          const [[x1, y1], [x2, y2]] = [at(from), at(to)]
-          // Not in the middle, where long sides cross.
-          const share = sense === 'forward' ? 0.5 : 0.3
-          return (
-            words && (
-              <text key={`${ring} ${i}`} x={x1 + share * (x2 - x1)} y={y1 + share * (y2 - y1)}>
-                {words}
-              </text>
-            )
-          )
-        }),
-      )}
+      {lines.map(([[x, y]]) => (
+        <circle key={`${x} ${y}`} cx={x} cy={y} r="3" />
+      ))}
+      {placeLabels(lines, textsOf(sides), frame).map(({ text, x, y }) => (
+        <text key={`${x} ${y}`} x={x} y={y} font-size={letter.height}>
+          {text}
+        </text>
+      ))}
     </svg>
   )
 }
