@@ -2,17 +2,12 @@
 import { InputError } from '../errors'
 import { distance, norm } from '../geometry/vec3'
 import { validateSolid } from '../solids'
+import { shapeHash } from '../solids/shape-hash'
 import type { Solid, SolidFacts } from '../solids/types'
 import { greatestFaceCount } from './file'
 
 /** The solid with its shape in its id: two files of one name are two models, one file read twice is one. */
-export const modelWithId = (solid: Solid): Solid => {
-  const numbers = new Float64Array([...solid.vertices.flat(), ...solid.faces.flatMap((f) => [f.kind, -1, ...f.cycle])])
-  // FNV-1a over the bytes.
-  let hash = 0x811c9dc5
-  for (const byte of new Uint8Array(numbers.buffer)) hash = Math.imul(hash ^ byte, 0x01000193)
-  return { ...solid, id: `${solid.id}-${(hash >>> 0).toString(36)}` }
-}
+export const modelWithId = (solid: Solid): Solid => ({ ...solid, id: `${solid.id}-${shapeHash(solid).toString(36)}` })
 
 const isRecord = (value: unknown): value is Record<string, unknown> => typeof value === 'object' && value !== null
 const isNumber = (value: unknown): value is number => typeof value === 'number' && Number.isFinite(value)

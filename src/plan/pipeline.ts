@@ -16,6 +16,7 @@ import { cardName, nest, papers } from '../sheets'
 import { type Closed, closeSlivers, computeSkin, type Skin, validateSkin } from '../skin'
 import { refuseLooseWalls } from '../skin/loose-walls'
 import { buildSolid, type Solid } from '../solids'
+import { shapeHash } from '../solids/shape-hash'
 import { checkChoices } from './choices'
 import { edgeForHeight, planCreases, planModel, planPanels } from './model'
 import { cutSkin } from './nets'
@@ -58,7 +59,7 @@ export const planSolid = (
   const perKind = choices.colours === 'kind'
 
   // A builder's model keeps its name when it is changed and read again, so its shape belongs to the key.
-  const skinKey = [solid.id, solid.hand, choices.fill, ...(solid.family === 'own' ? [shapeKey(solid)] : [])]
+  const skinKey = [solid.id, solid.hand, choices.fill, ...(solid.family === 'own' ? [shapeHash(solid)] : [])]
   const whole = cache.get('skin', skinKey, () => sound(computeSkin(solid, choices.fill, progress)))
   if (solid.family === 'own') refuseLooseWalls(solid, whole)
   const closeBelowMm = choices.closeBelowMm ?? 0
@@ -147,14 +148,6 @@ const closedInMm = (closed: Closed, belowMm: number, edgeMm: number): PlanClosed
   movedMm: round6(closed.moved * edgeMm),
   offPlaneMm: round6(closed.skin.slack * edgeMm),
 })
-
-/** A number for the shape of a model (FNV-1a over coordinates and cycles). */
-const shapeKey = (solid: Solid): number => {
-  let hash = 0x811c9dc5
-  const numbers = new Float64Array([...solid.vertices.flat(), ...solid.faces.flatMap((f) => [f.kind, -1, ...f.cycle])])
-  for (const byte of new Uint8Array(numbers.buffer)) hash = Math.imul(hash ^ byte, 0x01000193)
-  return hash >>> 0
-}
 
 /** A skin that does not keep its promises must never reach the builder's card. */
 const sound = (skin: Skin): Skin => {

@@ -1,26 +1,15 @@
 /** What the docket says of bodies that touch: two cubes, placed by hand in the ways that two bodies can touch. */
 import { describe, expect, test } from 'vitest'
 import { partWords } from '../../src/docket/words'
-import { identity3, type Vec3 } from '../../src/geometry/vec3'
+import type { Vec3 } from '../../src/geometry/vec3'
 import { makePlan, planSolid, usualChoices } from '../../src/plan'
 import type { Solid } from '../../src/solids'
+import { asSolid, box } from '../support/clusters'
 
-const cubes = (...lows: Vec3[]): Solid => {
-  const vertices = lows.flatMap((low) =>
-    Array.from({ length: 8 }, (_, i): Vec3 => [low[0] + (i & 1), low[1] + ((i >> 1) & 1), low[2] + (i >> 2)]),
-  )
-  const sides = [
-    [0, 2, 3, 1],
-    [4, 5, 7, 6],
-    [0, 1, 5, 4],
-    [2, 6, 7, 3],
-    [0, 4, 6, 2],
-    [1, 3, 7, 5],
-  ]
-  const faces = lows.flatMap((_, k) => sides.map((f) => ({ cycle: f.map((i) => 8 * k + i), kind: 0, orbit: 0 })))
-  const kinds = [{ id: 0, name: 'card', n: 4, d: 1, count: faces.length }]
-  return { id: 'cubes', name: 'cubes', hand: 'none', vertices, faces, kinds, rotations: [identity3], precision: 1e-9 }
-}
+const cubes = (...lows: Vec3[]): Solid => ({
+  ...asSolid(lows.map((low) => box(low, [low[0] + 1, low[1] + 1, low[2] + 1]))),
+  id: 'cubes',
+})
 
 const docketOf = (solid: Solid): ReturnType<typeof planSolid> =>
   planSolid(solid, { ...usualChoices, solid: 'cubes', heightMm: 100 })

@@ -1,29 +1,9 @@
 /** Where bodies touch at a point or along a line that no crease tells of: small arrangements worked out by hand. */
 import { describe, expect, test } from 'vitest'
-import { identity3, type Vec3 } from '../../src/geometry/vec3'
+import type { Vec3 } from '../../src/geometry/vec3'
 import { computeSkin, type Touch } from '../../src/skin'
-import { buildSolid, listSolids, type Solid } from '../../src/solids'
-
-interface Part {
-  readonly vertices: readonly Vec3[]
-  readonly faces: readonly (readonly number[])[]
-}
-
-const box = (low: Vec3, high: Vec3): Part => ({
-  vertices: Array.from({ length: 8 }, (_, i) => [
-    (i & 1 ? high : low)[0],
-    (i & 2 ? high : low)[1],
-    (i & 4 ? high : low)[2],
-  ]),
-  faces: [
-    [0, 2, 3, 1],
-    [4, 5, 7, 6],
-    [0, 1, 5, 4],
-    [2, 6, 7, 3],
-    [0, 4, 6, 2],
-    [1, 3, 7, 5],
-  ],
-})
+import { buildSolid, listSolids } from '../../src/solids'
+import { asSolid, box, type Part } from '../support/clusters'
 
 /** A prism that stands on its edge from (from, 0.5, 1) to (to, 0.5, 1). */
 const wedge = (from: number, to: number): Part => ({
@@ -57,17 +37,6 @@ const spike = (tip: Vec3): Part => ({
   ],
 })
 
-const together = (...parts: Part[]): Solid => {
-  const vertices: Vec3[] = []
-  const faces = parts.flatMap((p) => {
-    const base = vertices.length
-    vertices.push(...p.vertices)
-    return p.faces.map((f) => ({ cycle: f.map((i) => base + i), kind: 0, orbit: 0 }))
-  })
-  const kinds = [{ id: 0, name: 'card', n: 0, d: 1, count: faces.length }]
-  return { id: 'parts', name: 'parts', hand: 'none', vertices, faces, kinds, rotations: [identity3], precision: 1e-9 }
-}
-
 const cube = box([0, 0, 0], [1, 1, 1])
 
 /** Kind, bodies, ends to two digits. */
@@ -86,7 +55,7 @@ describe('touches', () => {
   ]
   for (const [name, other, parts, expected] of cases)
     test(name, () => {
-      const skin = computeSkin(together(cube, other))
+      const skin = computeSkin(asSolid([cube, other]))
       expect(skin.bodies).toBe(2)
       expect(skin.parts).toBe(parts)
       const touches = told(skin.touches).map((t) => JSON.stringify(t))

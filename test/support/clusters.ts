@@ -14,7 +14,8 @@ export interface Part {
   readonly plain?: { readonly vertices: Vec3[]; readonly triangles: number[][] }
 }
 
-const box = (low: Vec3, high: Vec3): Part => {
+/** Corners in binary order of their coordinates. */
+export const box = (low: Vec3, high: Vec3): Part => {
   const vertices: Vec3[] = []
   for (let i = 0; i < 8; i++) vertices.push([(i & 1 ? high : low)[0], (i & 2 ? high : low)[1], (i & 4 ? high : low)[2]])
   return {
