@@ -59,7 +59,7 @@ export const ShowAlone = ({ items, whole, show, onShow }: Props) => {
               onClick={() => onShow(isShown ? showAll : { what: 'kind', kind, orbit: null })}
             >
               <Swatch kind={kind} tints={{ [kind]: colour }} />
-              {kind}
+              {plural(kind)}
             </button>
           )
         })}
