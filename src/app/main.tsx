@@ -19,37 +19,41 @@ const start = async (): Promise<void> => {
   const prefs = createPrefs()
   const router = createRouter()
   const press = createPress()
-  const catalogue = signal<readonly SolidFacts[]>([])
   const trouble = signal<string | null>(null)
-  // Builders' own models stand after the catalogue.
-  const own = signal<readonly SolidFacts[]>([])
   const listed = signal<readonly SolidFacts[]>([])
-  effect(() => {
-    catalogue.value = [...listed.value, ...own.value]
-  })
-  // The 75 are there at once, the families a moment later.
-  void press.catalogue('uniform').then(async (first) => {
-    if (first.ok) listed.value = first.value
-    const all = await press.catalogue('all')
-    if (all.ok) listed.value = all.value
-    else trouble.value = `The list of solids could not be made: ${all.refusal.message}`
-  })
+  // Family by family, so that what is in sight gets its pictures in between.
+  const list = async (): Promise<void> => {
+    for (const family of ['uniform', 'prism', 'antiprism', 'dual', 'compound'] as const) {
+      const some = await press.catalogue(family)
+      if (some.ok) listed.value = [...listed.value, ...some.value]
+      else trouble.value = `The list of solids could not be made: ${some.refusal.message}`
+    }
+  }
+  void list()
   const keeper = await createKeeper(() => openStore())
   const planner = createPlanner()
   const workshop = await createWorkshop({ keeper, planner, now: Date.now, newId, rest: 350 })
 
-  // Every model of a build can be pictured and told of.
+  // Every model of a build can be pictured and told of; a build that is put away takes its model with it.
+  const ownFacts = signal<ReadonlyMap<string, SolidFacts>>(new Map())
+  const ownIds = signal<readonly string[]>([])
   const keptModels = new Set<string>()
   effect(() => {
+    const inUse = new Set<string>()
     for (const { model, removed } of [workshop.build.value, ...workshop.builds.value]) {
-      if (!model || removed || keptModels.has(model.id)) continue
+      if (!model || removed) continue
+      inUse.add(model.id)
+      if (keptModels.has(model.id)) continue
       keptModels.add(model.id)
       void press.keepModel(model).then((answer) => {
-        if (answer.ok) own.value = [...own.peek(), answer.value]
+        if (answer.ok) ownFacts.value = new Map(ownFacts.peek()).set(model.id, answer.value)
         else trouble.value = answer.refusal.message
       })
     }
+    // The same list stays the same, so that not every change of a build lists the Shelf anew.
+    if ([...inUse].join() !== ownIds.peek().join()) ownIds.value = [...inUse]
   })
+  const catalogue = computed(() => [...listed.value, ...ownIds.value.flatMap((id) => ownFacts.value.get(id) ?? [])])
 
   const spoken = signal('')
   let timer: ReturnType<typeof setTimeout> | undefined

@@ -1,7 +1,7 @@
 /** Computes plans. Whoever wants it to stop ends the worker, see planner.ts. */
 import { expose } from 'comlink'
 import { readModel } from '../models'
-import { modelWithId } from '../models/stored'
+import { checkedModel, modelWithId } from '../models/stored'
 import { makePlan, planSolid, StageCache } from '../plan'
 import { answer } from './answer'
 import type { PlannerApi, Report } from './protocol'
@@ -27,7 +27,10 @@ const sparse = (report: Report): Report => {
 
 const api: PlannerApi = {
   plan: (choices, model, report) =>
-    answer(() => (model ? planSolid(model, choices, sparse(report), cache) : makePlan(choices, sparse(report), cache))),
+    answer(() =>
+      // The model comes from a store, where anything may have happened to it.
+      model ? planSolid(checkedModel(model), choices, sparse(report), cache) : makePlan(choices, sparse(report), cache),
+    ),
   read: (bytes, fileName, report) =>
     answer(() => {
       const { solid, farthest, notes } = readModel(bytes, fileName, sparse(report))

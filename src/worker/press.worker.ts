@@ -7,7 +7,7 @@ import { pageToSvg, writePdf } from '../output'
 import { planText } from '../plan/file'
 import { validatePlan } from '../plan/validate'
 import { faceItems, renderThumbnail } from '../preview/thumbnail'
-import { buildSolid, findSolids, listFamily, listSolids } from '../solids'
+import { buildSolid, familyOf, findSolids, listFamily, whyNot } from '../solids'
 import { solidParts } from '../solids/parts'
 import type { Solid } from '../solids/types'
 import { vertexFigure } from '../solids/vertex-figure'
@@ -28,14 +28,23 @@ const models = new Map<string, Solid>()
 const solidOf = (id: string, hand?: 'left' | 'right'): Solid => models.get(id) ?? buildSolid(id, hand)
 
 const api: PressApi = {
-  catalogue: (which) => answer(() => [...(which === 'uniform' ? listFamily('uniform') : listSolids())]),
+  catalogue: (family) => answer(() => [...listFamily(family)]),
+  knows: (id) => answer(() => familyOf(id) !== undefined),
   keepModel: (model) =>
     answer(() => {
       const solid = checkedModel(model)
       models.set(solid.id, solid)
       return modelFacts(solid)
     }),
-  find: (query) => answer(() => findSolids(query).map(({ id }) => id)),
+  find: (query) =>
+    answer(() => {
+      const words = query.toLowerCase().trim()
+      const own = [...models.values()].filter(({ name }) => name.toLowerCase().includes(words))
+      return {
+        ids: [...findSolids(query), ...own].map(({ id }) => id),
+        why: whyNot(words.replace(/[^a-z0-9]+/g, '-')),
+      }
+    }),
   faces: (id, hand, fill, colours) =>
     answer(() => {
       const solid = solidOf(id, hand)

@@ -55,15 +55,17 @@ export interface PageSummary {
 
 /** Short work that goes on beside the planner. */
 export interface PressApi {
-  /** The 75 uniform polyhedra, or all families; the second takes about a second. */
-  catalogue(which: 'uniform' | 'all'): Answer<SolidFacts[]>
+  /** One family of the catalogue; asked for one by one, other work gets in between. Constructed once, then kept. */
+  catalogue(family: SolidFacts['family']): Answer<SolidFacts[]>
+  /** Whether the catalogue has this id; nothing is constructed. */
+  knows(id: string): Answer<boolean>
   /**
    * Makes a builder's model known to the press, so that it can be pictured like one of the catalogue. What comes from a
    * store or a file is looked over first, and refused with a reason when it is no sound solid.
    */
   keepModel(model: unknown): Answer<SolidFacts>
-  /** Ids, best match first. */
-  find(query: string): Answer<string[]>
+  /** Ids, best match first; builders' models come last. `why`: the reason where what is asked for by its name cannot be. */
+  find(query: string): Answer<{ ids: string[]; why: string | null }>
   /** The raw faces as scene items: id = face index, kind = name of the face kind; none of a model of thousands of faces. */
   faces(
     id: string,

@@ -7,6 +7,7 @@ import type { Browser, Page } from 'playwright-core'
 import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import { launch } from '../browser/chromium'
 import { type Served, serveApp } from '../browser/serve'
+import { pyramid } from './models'
 import { goTo, noComplaints, openApp, pageDrawn, planReady, takeToBoard } from './open-app'
 
 const axe = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8')
@@ -72,6 +73,17 @@ describe.each([
     await page.keyboard.press('Escape')
     await page.locator('.build-name').click()
     await check('builds')
+    await page.keyboard.press('Escape')
+    for (const [name, text, sign] of [
+      ['roof.obj', pyramid, '6 faces, 5 vertices'],
+      ['open.obj', pyramid.replace('f 1 4 3\n', ''), 'Nothing has been changed.'],
+    ] as const) {
+      await goTo(page, 'Shelf')
+      await page.getByTestId('open-model').setInputFiles({ name, mimeType: '', buffer: Buffer.from(text) })
+      await page.locator('dialog').getByText(sign).waitFor()
+      await check(name)
+      await page.keyboard.press('Escape')
+    }
     expect(found).toEqual([])
     noComplaints(complaints)
     await context.close()

@@ -47,7 +47,7 @@ export const openApp = async (
 /** Finds a solid by its name on the Shelf and takes it to the Board. */
 export const takeToBoard = async (page: Page, name: string): Promise<void> => {
   await page.getByRole('searchbox').fill(name)
-  await page.locator(`[data-solid="${name.replaceAll(' ', '-')}"]`).click()
+  await page.locator(`[data-solid="${name.replace(/[^a-z0-9]+/g, '-')}"]`).click()
   await page
     .locator('[data-looked]')
     .getByRole('button', { name: /to the Board/i })

@@ -6,22 +6,9 @@ import type { Browser, Page } from 'playwright-core'
 import { afterAll, beforeAll, expect, test } from 'vitest'
 import { launch } from '../browser/chromium'
 import { serveApp } from '../browser/serve'
+import { pyramid } from './models'
 import { goTo, noComplaints, openApp, planReady, takeToBoard } from './open-app'
 
-/** A square pyramid with its base as two triangles; one unit is an inch. */
-const pyramid = `# demo
-v 0 0 0
-v 2 0 0
-v 2 2 0
-v 0 2 0
-v 1 1 1.5
-f 1 3 2
-f 1 4 3
-f 1 2 5
-f 2 3 5
-f 3 4 5
-f 4 1 5
-`
 const folder = mkdtempSync(join(tmpdir(), 'facetwright-own-'))
 const fileOf = (name: string, text: string): string => {
   const path = join(folder, name)
@@ -120,6 +107,28 @@ test('what is wrong with a file is said with its place, and nothing is lost', as
   await dialog.waitFor({ state: 'detached' })
   expect(await page.locator('.build-name').textContent()).toContain('tetrahedron')
 
+  // Two at once, of one name: the later one counts.
+  await page.evaluate((content) => {
+    const again = (text: string) => {
+      const data = new DataTransfer()
+      data.items.add(new File([text], 'twice.obj'))
+      document
+        .querySelector('main')!
+        .dispatchEvent(new DragEvent('drop', { bubbles: true, cancelable: true, dataTransfer: data }))
+    }
+    again(content.replace('f 1 4 3\n', ''))
+    again(content)
+  }, pyramid)
+  await dialog.getByText('6 faces, 5 vertices').waitFor()
+  // While it is being read, the later one pushes in too, and putting away leaves nothing behind.
+  await drop(page, 'twice.obj', pyramid)
+  await page.keyboard.press('Escape')
+  await dialog.waitFor({ state: 'detached' })
+  await drop(page, 'again.obj', pyramid)
+  await dialog.getByText('6 faces, 5 vertices').waitFor()
+  await page.keyboard.press('Escape')
+  await dialog.waitFor({ state: 'detached' })
+
   // A file that is refused by its size is never read.
   await page.evaluate(() => {
     const huge = new File(['v 0 0 0'], 'huge.stl')
@@ -142,6 +151,36 @@ test('what is wrong with a file is said with its place, and nothing is lost', as
   await context.close()
 })
 
+test('a prism in the lane with WebGL; a dual that cannot be says why; own models are found by name', async () => {
+  const glass = await launch('webgl')
+  const { page, complaints } = await openApp(glass, app.url, 'webgl')
+  await page.locator('[data-solid="pentagrammic-5-2-prism"]').waitFor()
+  await takeToBoard(page, 'pentagrammic 5/2 prism')
+  await planReady(page)
+  expect(await page.locator('[data-fact=checks] .value').textContent()).toMatch(/^(\d+) of \1 ok$/)
+
+  await drop(page, 'roof.obj', pyramid)
+  await page.locator('dialog').getByRole('button', { name: 'Take to the Board' }).click()
+  await page.locator('.build-name', { hasText: 'roof' }).waitFor()
+  await planReady(page)
+  // Something else in the same build, and back by the Shelf.
+  await goTo(page, 'Shelf')
+  await takeToBoard(page, 'cube')
+  await planReady(page)
+  await goTo(page, 'Shelf')
+  await page.getByRole('searchbox').fill('roof')
+  await page.locator('.cards [data-solid^=own-roof]').click()
+  await page.locator('[data-looked]').getByRole('button', { name: 'Take to the Board' }).click()
+  await page.locator('.build-name', { hasText: 'roof' }).waitFor()
+  await planReady(page)
+
+  await goTo(page, 'Shelf')
+  await page.getByRole('searchbox').fill('Tetrahemihexacron')
+  await page.getByText('3 of the 7 faces of its dual').waitFor()
+  noComplaints(complaints)
+  await glass.close()
+})
+
 test('families on the Shelf; slivers are proposed to be closed up', async () => {
   const { context, page, complaints } = await openApp(browser, app.url, 'no-3d')
   await page.getByRole('button', { name: 'antiprisms', exact: true }).click()
@@ -158,9 +197,13 @@ test('families on the Shelf; slivers are proposed to be closed up', async () => 
   await page.getByRole('button', { name: 'Show all' }).click()
   await takeToBoard(page, 'inverted snub dodecadodecahedron')
   await planReady(page)
-  await page.getByText('60 stretches shorter than 0.3 mm').waitFor()
+  await page.getByText('60 stretches shorter than 0.3 mm: no one').waitFor()
+  await page
+    .locator('[data-fact=closed]', { hasText: '60 stretches shorter than 0.3 mm' })
+    .waitFor({ state: 'attached' })
   await page.getByRole('button', { name: 'Close them up' }).click()
   await page.getByText('60 stretches closed up').waitFor({ timeout: 120_000 })
+  await page.locator('[data-fact=closed]', { hasText: 'no corner moved more than' }).waitFor({ state: 'attached' })
   noComplaints(complaints)
   await context.close()
 })

@@ -1,4 +1,5 @@
 import { describe, expect, test } from 'vitest'
+import { colourOf, defaultColours, patternOf } from '../../src/app/palette'
 import { readPlace, writePlace } from '../../src/app/route'
 import { firstChoices } from '../../src/app/state/choices'
 import { isConvex, passes } from '../../src/app/stations/shelf-filter'
@@ -47,6 +48,25 @@ describe('the docket', () => {
     // Net area in m² times 160 g/m².
     const grams = Math.round((plan.docket.netAreaMm2 / 1e6) * 160)
     expect(fact('card').meaning).toContain(`about ${grams} g`)
+  })
+
+  test('tells stretches that no one can cut, and what closing them up has changed', () => {
+    expect(fact('closed')).toMatchObject({
+      value: 'nothing',
+      meaning: 'no stretch is too short to cut',
+      caution: false,
+    })
+    const short = cubePlan()
+    const [from] = short.creases[0]!.ends
+    short.creases[0]!.ends = [from, [from[0] + 0.2, from[1], from[2]]]
+    const told = (of: typeof plan) => docketFacts(of, firstChoices('cube')).find(({ id }) => id === 'closed')!
+    expect(told(short).caution).toBe(true)
+    expect(told(short).meaning).toContain('1 stretch shorter than 0.3 mm')
+    short.docket.closed = { belowMm: 0.3, stretches: 12, panels: 4, movedMm: 0.147, offPlaneMm: 0.02 }
+    expect(told(short)).toMatchObject({
+      value: '12 stretches',
+      meaning: 'shorter than 0.3 mm; no corner moved more than 0.15 mm, panels are flat within 0.02 mm',
+    })
   })
 
   test('points at what to look at, in a word', () => {
@@ -133,6 +153,15 @@ describe('the Shelf', () => {
     for (const solid of with_('pentagram', 'square'))
       expect(solid.facesByKind.map(({ name }) => name)).toEqual(expect.arrayContaining(['pentagram', 'square']))
     expect(with_('pentagram', 'square').length).toBeGreaterThan(0)
+  })
+  test('every face kind has its colour before the facts are there, and no two of one solid look alike', () => {
+    for (const family of ['uniform', 'prism', 'antiprism', 'dual', 'compound'] as const)
+      for (const { id, facesByKind } of listFamily(family)) {
+        const kinds = facesByKind.map(({ name }) => name)
+        for (const name of kinds) expect(defaultColours[name], `${id}: ${name}`).toBe(colourOf(name, {}))
+        expect(new Set(kinds.map(patternOf)).size, `${id}: ${kinds}`).toBe(kinds.length)
+        expect(new Set(kinds.map((name) => colourOf(name, {}))).size, `${id}: ${kinds}`).toBe(kinds.length)
+      }
   })
   test('search finds by name, number, vertex configuration and Wythoff symbol', () => {
     const first = (query: string) => findSolids(query)[0]?.id

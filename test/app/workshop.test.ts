@@ -5,10 +5,17 @@ import { createWorkshop, type Workshop } from '../../src/app/state/workshop'
 import { openStore } from '../../src/app/storage/database'
 import { buildFileText, readFileText } from '../../src/app/storage/file'
 import { createKeeper } from '../../src/app/storage/keeper'
+import { buildSolid } from '../../src/solids'
 import { type FakePlanner, fakePlanner } from './fake-planner'
 import { planFor } from './plans'
 
-const pause = (ms = 8): Promise<void> => new Promise((resolve) => setTimeout(resolve, ms))
+/** Turns of the event loop, not milliseconds: on a busy machine the store takes as many of them, but longer. */
+const pause = async (turns = 30): Promise<void> => {
+  for (let i = 0; i < turns; i++) {
+    await new Promise((resolve) => setTimeout(resolve, 0))
+    await new Promise((resolve) => setImmediate(resolve))
+  }
+}
 let databases = 0
 let ids = 0
 
@@ -196,6 +203,53 @@ describe('builds', () => {
     expect(workshop.choices.value.solid).toBe('cube')
     await workshop.open(first)
     expect(workshop.glued.value).toEqual([0])
+  })
+
+  test("a builder's model goes with its build, with a copy, and with every build that is begun with it", async () => {
+    const { workshop, planner, name } = await open()
+    const model = { ...buildSolid('cube'), id: 'own-box-1', name: 'box' }
+    const holds = () => [workshop.choices.value.solid, workshop.build.value.model?.id]
+    await workshop.takeModel(model, 120)
+    expect(workshop.choices.value).toMatchObject({ solid: 'own-box-1', heightMm: 120 })
+    const first = workshop.build.value.id
+    workshop.wanted.value = true
+    await pause()
+    expect(planner.models).toEqual([model])
+    await planner.finish()
+
+    // Something else in the same build, and the model again.
+    workshop.take('tetrahedron', 'right')
+    await pause()
+    expect(planner.models.at(-1)).toBeNull()
+    await planner.finish()
+    workshop.take('own-box-1', 'right')
+    expect([...holds(), workshop.build.value.id]).toEqual(['own-box-1', 'own-box-1', first])
+    workshop.undo()
+    await pause()
+
+    // From a build that has glued pieces: the model comes along to the new one.
+    workshop.glue(0)
+    workshop.take('own-box-1', 'right')
+    await pause()
+    expect(workshop.build.value.id).not.toBe(first)
+    expect(holds()).toEqual(['own-box-1', 'own-box-1'])
+    // A build of a second model keeps that one: undo must find it.
+    await workshop.takeModel({ ...model, id: 'own-crate-1' }, 100)
+    const second = workshop.build.value.id
+    workshop.take('own-box-1', 'right')
+    await pause()
+    expect(holds()).toEqual(['own-box-1', 'own-box-1'])
+    expect(workshop.builds.value.find(({ id }) => id === second)?.model?.id).toBe('own-crate-1')
+    workshop.copyBuild()
+    await pause()
+    expect(holds()).toEqual(['own-box-1', 'own-box-1'])
+
+    const again = await open(name)
+    expect(again.workshop.build.value.model).toEqual(model)
+    const text = await buildFileText(again.workshop.build.value, (key) => again.workshop.keeper.plan(key))
+    const { workshop: other } = await open()
+    await other.openFile(readFileText('box.json', text))
+    expect(other.build.value.model).toEqual(model)
   })
 
   test('put away, bring back; for good only when asked', async () => {

@@ -197,6 +197,10 @@ export const createWorkshop = async (around: Surroundings): Promise<Workshop> =>
     await keeper.save(next)
   }
 
+  /** A builder's model, from whichever build holds it. */
+  const modelBy = (id: string): Solid | undefined =>
+    [build.peek(), ...builds.peek()].find(({ model }) => model?.id === id)?.model
+
   void keeper.setCurrent(first.id)
   const workshop: Workshop = {
     keeper,
@@ -248,9 +252,13 @@ export const createWorkshop = async (around: Surroundings): Promise<Workshop> =>
     resumeJob: (id) => set({ ...build.peek(), job: id }),
     take(solid, hand) {
       const wish = { ...choices.peek(), solid, hand }
-      if (build.peek().jobs.length === 0) set(choose(build.peek(), wish))
+      const model = modelBy(solid)
+      const present = build.peek()
+      // One build holds one model: undo must find it.
+      const room = !model || !present.model || present.model.id === model.id
+      if (present.jobs.length === 0 && room) set(choose(model ? { ...present, model } : present, wish))
       else if (solid !== choices.peek().solid) {
-        const next = newBuild(newId(), wish, now())
+        const next = newBuild(newId(), wish, now(), model)
         void keeper.save(next)
         void swap(next)
       } else set(choose(build.peek(), wish))

@@ -3,6 +3,7 @@ import { useEffect, useMemo, useRef, useState } from 'preact/hooks'
 import type { SceneItem } from '../../preview'
 import type { SolidFacts } from '../../worker'
 import { colourOf } from '../palette'
+import { choicesOf } from '../state/build'
 import { factsKey } from '../state/workshop'
 import { useApp } from '../ui/context'
 import { ModelView } from '../ui/ModelView'
@@ -21,10 +22,16 @@ const chosen = signal<ReadonlySet<string>>(new Set())
 const looked = signal<string | null>(null)
 const hand = signal<'left' | 'right'>('right')
 
-/** Ids that the search finds, best first; null while there is nothing to search for. */
+interface Found {
+  /** Best first. */
+  readonly ids: readonly string[]
+  /** Why something asked for by name does not exist. */
+  readonly why: string | null
+}
+/** What the search finds; null while there is nothing to search for. */
 const useFound = () => {
   const { press } = useApp()
-  const found = useSignal<readonly string[] | null>(null)
+  const found = useSignal<Found | null>(null)
   const text = query.value.trim()
   useEffect(() => {
     if (text === '') {
@@ -33,7 +40,7 @@ const useFound = () => {
     }
     let stale = false
     void press.find(text).then((answer) => {
-      if (!stale) found.value = answer.ok ? answer.value : []
+      if (!stale) found.value = answer.ok ? answer.value : { ids: [], why: null }
     })
     return () => {
       stale = true
@@ -121,9 +128,9 @@ const Looked = ({ solid }: { solid: SolidFacts }) => {
   const [show, setShow] = useState(showAll)
   const known = workshop.known.value.get(factsKey(solid.id, 'nonzero'))
   const isHere = workshop.choices.value.solid === solid.id
-  /** A model from a file lives in the build that was begun with it. */
+  /** A model from a file has a build already. */
   const buildWith = (id: string): string | null =>
-    workshop.builds.peek().find(({ model, removed }) => model?.id === id && !removed)?.id ?? null
+    workshop.builds.peek().find((build) => choicesOf(build).solid === id && !build.removed)?.id ?? null
   return (
     <section class="looked" aria-label={capital(solid.name)} data-looked={solid.id}>
       <h2 tabIndex={-1}>{capital(solid.name)}</h2>
@@ -222,7 +229,7 @@ export const Shelf = () => {
   const detail = useRef<HTMLDivElement>(null)
   const shown = useComputed(() => {
     const all = catalogue.value
-    const ids = found.value
+    const ids = found.value?.ids
     const listed = ids ? ids.flatMap((id) => all.find((solid) => solid.id === id) ?? []) : all
     return listed.filter((solid) => passes(solid, chosen.value))
   })
@@ -266,7 +273,7 @@ export const Shelf = () => {
         </div>
         {catalogue.value.length === 0 && <p class="soft">Constructing the solids</p>}
         {catalogue.value.length > 0 && shown.value.length === 0 && (
-          <p>No solid fits. Take a word away, or search for part of a name.</p>
+          <p>{found.value?.why ?? 'No solid fits. Take a word away, or search for part of a name.'}</p>
         )}
         <ul class="cards">
           {shown.value.map((solid) => (

@@ -16,17 +16,21 @@ type Incoming =
 
 /** What has been picked or dropped, until it is taken or put away. */
 const incoming = signal<Incoming | null>(null)
+/** Counts the files: a later one, and putting away, leave the earlier one behind. */
+let turn = 0
 
 const receive = async ({ reader, announce }: AppContext, file: File): Promise<void> => {
   const { name } = file
+  const mine = ++turn
+  const isMine = (): boolean => mine === turn
   incoming.value = { kind: 'reading', name, fraction: 0 }
-  const isMine = (): boolean => incoming.peek()?.name === name
   try {
     // Before anything is read: a file of gigabytes must not fill the memory.
     checkFileSize(file.size, name)
     const bytes = new Uint8Array(await file.arrayBuffer())
+    if (!isMine()) return
     const answer = await reader.read(bytes, name, (_, fraction) => {
-      if (incoming.peek()?.kind === 'reading' && isMine()) incoming.value = { kind: 'reading', name, fraction }
+      if (isMine()) incoming.value = { kind: 'reading', name, fraction }
     })
     if (!isMine()) return
     incoming.value = answer.ok
@@ -37,7 +41,8 @@ const receive = async ({ reader, announce }: AppContext, file: File): Promise<vo
     const message = error instanceof InputError ? error.message : `${name} cannot be read: ${String(error)}`
     incoming.value = { kind: 'refused', name, message }
   } finally {
-    reader.close()
+    // A later file is being read by the same worker.
+    if (isMine()) reader.close()
   }
   announce(incoming.peek()?.kind === 'read' ? `${name} is read.` : `${name} cannot be used.`)
 }
@@ -124,14 +129,14 @@ const Read = ({ model: { solid, farthest, notes } }: { model: ReadModel }) => {
       onSubmit={async (event) => {
         event.preventDefault()
         if (heightMm === null) return
+        // Put away first: a second click must not begin a second build.
+        incoming.value = null
         const kept = await press.keepModel(solid)
         if (!kept.ok) {
           trouble.value = kept.refusal.message
-          incoming.value = null
           return
         }
         await workshop.takeModel(solid, heightMm)
-        incoming.value = null
         router.go('board')
       }}
     >
@@ -231,7 +236,8 @@ export const OpenModelDialog = () => {
   const state = incoming.value
   if (!state) return null
   const putAway = (): void => {
-    if (state.kind === 'reading') reader.cancel()
+    turn++
+    reader.close()
     incoming.value = null
   }
   return (
@@ -253,7 +259,7 @@ export const OpenModelDialog = () => {
           <p>Nothing has been changed.</p>
         </>
       )}
-      {state.kind === 'read' && <Read model={state.model} />}
+      {state.kind === 'read' && <Read key={state.model.solid.id} model={state.model} />}
     </Dialog>
   )
 }

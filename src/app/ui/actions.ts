@@ -28,14 +28,14 @@ export const openFile = async (app: AppContext, file: File): Promise<boolean> =>
   try {
     const opened = readFileText(file.name, await file.text())
     const plans = opened.kind === 'plan' ? [opened.plan] : Object.values(opened.plans)
-    const catalogue = await app.press.catalogue('all')
     const model = opened.kind === 'build' ? opened.build.model : undefined
     if (model) {
       const kept = await app.press.keepModel(model)
       if (!kept.ok) throw new InputError(`${file.name}: ${kept.refusal.message}`, file.name)
     }
     for (const plan of plans) {
-      if (catalogue.ok && plan.model.id !== model?.id && !catalogue.value.some(({ id }) => id === plan.model.id))
+      const known = await app.press.knows(plan.model.id)
+      if (known.ok && !known.value && plan.model.id !== model?.id)
         throw new InputError(
           plan.model.id.startsWith('own-')
             ? `${file.name} is the plan of a model from a file, and does not hold the model. Open the model, or the build file.`

@@ -21,8 +21,8 @@ export interface AppContext {
   readonly reader: Planner
   readonly router: Router
   readonly prefs: Prefs
-  /** Empty until the worker has answered. */
-  readonly catalogue: Signal<readonly SolidFacts[]>
+  /** Family by family as the worker answers, empty before; then builders' own models. */
+  readonly catalogue: ReadonlySignal<readonly SolidFacts[]>
   readonly solid: ReadonlySignal<SolidFacts | null>
   /** What was wrong with something the builder just did; shown until put away. */
   readonly trouble: Signal<string | null>

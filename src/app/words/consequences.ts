@@ -64,12 +64,16 @@ export const sayCut = (nets: NonNullable<PlanChoices['nets']>): string =>
     single: 'Every panel for itself: for card of many colours.',
   })[nets]
 
+/** By how much closing up has changed the skin. */
+export const sayMoved = ({ movedMm, offPlaneMm }: NonNullable<Plan['docket']['closed']>): string =>
+  `no corner moved more than ${figure(movedMm, 2)} mm, panels are flat within ${figure(offPlaneMm, 2)} mm`
+
 /** What closing up has done, or would do. */
 export const sayClosed = (plan: Plan | null, below: number): string => {
   if (below === 0) return '0 closes none.'
   const closed = plan?.docket.closed
   if (!closed || closed.belowMm !== below) return 'Short edges are drawn together to a point; the skin stays closed.'
-  return `${counted(closed.stretches, 'stretch', 'stretches')} closed up; no corner moved more than ${figure(closed.movedMm, 2)} mm, panels are flat within ${figure(closed.offPlaneMm, 2)} mm.`
+  return `${counted(closed.stretches, 'stretch', 'stretches')} closed up; ${sayMoved(closed)}.`
 }
 
 /** What the nets came to; null without a plan. */

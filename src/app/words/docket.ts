@@ -1,7 +1,8 @@
 /** The docket: the same facts in the same order, each with what it means for the builder. */
-import { holdWords, partWords } from '../../drawing'
+import { holdWords, partWords, shortStretches, usualCloseMm } from '../../drawing'
 import type { Plan, PlanChoices } from '../../plan/types'
 import { papers } from '../state/choices'
+import { sayMoved } from './consequences'
 import { narrowest, sayAngle, sayHours, sayNarrowestAt, spareSheets } from './craft'
 import { areaText, counted, degreesText, figure, hoursText, lengthText, mmText, percentText } from './figures'
 
@@ -26,6 +27,29 @@ const spares = (plan: Plan): number => {
   const counts = new Map<string, number>()
   for (const { colour } of plan.sheets) counts.set(colour, (counts.get(colour) ?? 0) + 1)
   return [...counts.values()].reduce((sum, n) => sum + n + spareSheets(n), 0)
+}
+
+/** Stretches closed up, or too short and left as they are. */
+const closedFact = (plan: Plan): Fact => {
+  const { closed } = plan.docket
+  if (closed)
+    return {
+      id: 'closed',
+      name: 'Closed up',
+      value: counted(closed.stretches, 'stretch', 'stretches'),
+      meaning: `shorter than ${figure(closed.belowMm, 2)} mm; ${sayMoved(closed)}`,
+    }
+  const short = shortStretches(plan)
+  return {
+    id: 'closed',
+    name: 'Closed up',
+    value: 'nothing',
+    meaning:
+      short > 0
+        ? `${counted(short, 'stretch', 'stretches')} shorter than ${usualCloseMm} mm; the Board closes them up`
+        : 'no stretch is too short to cut',
+    caution: short > 0,
+  }
 }
 
 /** @param choices those that the plan was made from */
@@ -81,6 +105,7 @@ export const docketFacts = (plan: Plan, choices: PlanChoices): Fact[] => {
       caution: width < narrowest.fingers,
       panel: docket.tightest.panel,
     },
+    closedFact(plan),
     {
       id: 'sharpest',
       name: 'Sharpest inner angle',
