@@ -185,7 +185,8 @@ test('families on the Shelf; slivers are proposed to be closed up', async () => 
   const { context, page, complaints } = await openApp(browser, app.url, 'no-3d')
   await page.getByRole('button', { name: 'antiprisms', exact: true }).click()
   await page.locator('[data-solid="heptagrammic-7-3-antiprism"]').waitFor()
-  expect(await page.locator('.cards li').count()).toBe(117)
+  // The cards come a few at a time.
+  await expect.poll(() => page.locator('.cards li').count(), { timeout: 30_000 }).toBe(117)
   await page.getByRole('button', { name: 'antiprisms', exact: true }).click()
   await page.getByRole('button', { name: 'duals', exact: true }).click()
   await page.locator('[data-solid="rhombic-triacontahedron"]').click()

@@ -1,5 +1,5 @@
 import { signal, useComputed, useSignal } from '@preact/signals'
-import { useEffect, useMemo, useRef, useState } from 'preact/hooks'
+import { useCallback, useEffect, useMemo, useRef, useState } from 'preact/hooks'
 import type { SceneItem } from '../../preview'
 import type { SolidFacts } from '../../worker'
 import { colourOf } from '../palette'
@@ -74,17 +74,36 @@ const Filters = () => (
   </div>
 )
 
-const Card = ({ solid, onPick }: { solid: SolidFacts; onPick: () => void }) => {
+/** Cards that are put on the page at a time: few enough that neither typing nor scrolling waits for them. */
+const atOnce = 24
+
+/** The first ones of a list, and a frame later some more, until all are there. */
+const useGrowing = <T,>(all: readonly T[]): readonly T[] => {
+  const [grown, setGrown] = useState({ all, count: atOnce })
+  // A list that only goes on longer leaves what is there.
+  const last = Math.min(grown.count, grown.all.length) - 1
+  const count = all[last] && all[last] === grown.all[last] ? grown.count : atOnce
+  useEffect(() => {
+    if (count >= all.length) return
+    const timer = setTimeout(() => setGrown({ all, count: count + atOnce }), 16)
+    return () => clearTimeout(timer)
+  }, [all, count])
+  return all.slice(0, count)
+}
+
+/** @param onPick the same one every time, so that a card is drawn again only when something in it changes */
+const Card = ({ solid, onPick }: { solid: SolidFacts; onPick: (id: string) => void }) => {
   const { workshop } = useApp()
-  const known = workshop.known.value.get(factsKey(solid.id, 'nonzero'))
+  const isLooked = useComputed(() => looked.value === solid.id)
+  const known = useComputed(() => workshop.known.value.get(factsKey(solid.id, 'nonzero'))).value
   return (
     <li>
       <button
         type="button"
         class="card"
-        aria-pressed={looked.value === solid.id}
+        aria-pressed={isLooked.value}
         data-solid={solid.id}
-        onClick={onPick}
+        onClick={() => onPick(solid.id)}
       >
         <Picture solid={solid.id} size={136} />
         <span class="card-name">{breakable(capital(solid.name))}</span>
@@ -234,6 +253,13 @@ export const Shelf = () => {
     return listed.filter((solid) => passes(solid, chosen.value))
   })
   const subject = catalogue.value.find(({ id }) => id === (looked.value ?? workshop.choices.value.solid))
+  const drawn = useGrowing(shown.value)
+  const pick = useCallback((id: string) => {
+    looked.value = id
+    // On a narrow screen the details stand above the list.
+    const box = detail.current!.getBoundingClientRect()
+    if (box.bottom < 0) detail.current!.scrollIntoView({ block: 'start' })
+  }, [])
   const filtered = chosen.value.size > 0 || query.value.trim() !== ''
   return (
     <div class="shelf">
@@ -276,17 +302,8 @@ export const Shelf = () => {
           <p>{found.value?.why ?? 'No solid fits. Take a word away, or search for part of a name.'}</p>
         )}
         <ul class="cards">
-          {shown.value.map((solid) => (
-            <Card
-              key={solid.id}
-              solid={solid}
-              onPick={() => {
-                looked.value = solid.id
-                // On a narrow screen the details stand above the list.
-                const box = detail.current!.getBoundingClientRect()
-                if (box.bottom < 0) detail.current!.scrollIntoView({ block: 'start' })
-              }}
-            />
+          {drawn.map((solid) => (
+            <Card key={solid.id} solid={solid} onPick={pick} />
           ))}
         </ul>
       </section>
