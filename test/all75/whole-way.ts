@@ -37,6 +37,8 @@ class Recorder extends StageCache {
 }
 
 interface Glued {
+  /** As its line contacts are paired for these nets. */
+  readonly skin: Skin
   readonly pieces: readonly Piece[]
   readonly tabs: readonly (readonly Tab[])[]
 }
@@ -64,7 +66,7 @@ const sheetFaults = ({ pieces, tabs }: Glued, sheets: readonly NestedSheet[]): s
   return broken('sheets', validateSheets(items, sheets, { widthMm, heightMm, marginMm, gapMm, mirrored: false }))
 }
 
-const pieceFaults = (skin: Skin, { pieces, tabs }: Glued, plan: Plan): string[] =>
+const pieceFaults = ({ skin, pieces, tabs }: Glued, plan: Plan): string[] =>
   broken(
     'pieces',
     validatePieces({ skin, edgeMm: plan.model.edgeMm, pieces, tabs, buttSeams: plan.docket.buttSeams, fit }),
@@ -86,7 +88,8 @@ export const wholeWay = (part: 0 | 1): void => {
     expect([
       ...broken('solid', validateSolid(solid)),
       ...broken('skin', validateSkin(skin)),
-      ...pieceFaults(skin, glued, plan),
+      ...broken('paired skin', validateSkin(glued.skin)),
+      ...pieceFaults(glued, plan),
       ...sheetFaults(glued, recorder.of<NestedSheet[]>('sheets')),
       ...broken('plan', validatePlan(plan)),
       ...schemaFaults(planSchema, plan),
