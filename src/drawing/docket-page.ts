@@ -24,7 +24,10 @@ export const docketRows = (plan: Plan, choices: PlanChoices): [string, string, s
   const paper = choices.paper === 'a4' ? 'A4' : 'US Letter'
   return [
     ['Height', `${plan.model.heightMm} mm`, 'diameter of the sphere through the vertices'],
-    ['Edge', `${plan.model.edgeMm.toFixed(2)} mm`, 'of the whole faces'],
+    // A builder's model has no one edge: its unit is half its height.
+    ...(plan.model.id.startsWith('own-')
+      ? []
+      : [['Edge', `${plan.model.edgeMm.toFixed(2)} mm`, 'of the whole faces'] satisfies [string, string, string]]),
     ['Card', `${choices.grammage} g/m², ${paper}`, `printed on the ${choices.side}: ${sideWords(choices.side)}`],
     [
       'Sheets',
