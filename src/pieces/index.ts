@@ -81,7 +81,7 @@ const fitWithoutTabs = ({ widthMm, heightMm }: FitRectangle, room: number): FitR
 })
 
 /** Enough for most of what there is to gain; a second or two below 500 panels, some ten for the largest skins. */
-const usualEffort = (panels: number): number => Math.min(10 * panels, 1000 + 4 * panels)
+export const usualEffort = (panels: number): number => Math.min(10 * panels, 1000 + 4 * panels)
 
 /** The pieces of a set of folds, whoever chose it; by smallest panel id. Congruent pieces get the same coordinates. */
 export const piecesOf = (skin: Skin, edgeMm: number, folds: readonly number[], fit: FitRectangle): Piece[] =>

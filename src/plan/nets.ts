@@ -1,6 +1,6 @@
 /** The cut for a plan: nets of the kind asked for, and line contacts paired in the way that serves them. */
 import type { Progress } from '../errors'
-import { type Cut, type CutOptions, cutIntoPieces } from '../pieces'
+import { type Cut, type CutOptions, cutIntoPieces, usualEffort } from '../pieces'
 import { type Skin, withPairing } from '../skin'
 
 export interface CutSkin {
@@ -22,9 +22,11 @@ export const cutSkin = (skin: Skin, options: CutOptions, progress: Progress): Cu
   if (options.nets !== 'single' && across.parts <= skin.parts && across !== ways[0]) ways.push(across)
   const worth = ({ pieces }: Cut): number =>
     options.nets === 'repeat' ? 1e6 * new Set(pieces.map((p) => p.template)).size + pieces.length : pieces.length
+  // Two searches must not take twice as long as one.
+  const effort = usualEffort(skin.panels.length) * (ways.length > 1 ? 0.5 : 1)
   let best: CutSkin | null = null
   ways.forEach((way, i) => {
-    const cut = cutIntoPieces(way, options, (stage, done) => progress(stage, (i + done) / ways.length))
+    const cut = cutIntoPieces(way, { ...options, effort }, (stage, done) => progress(stage, (i + done) / ways.length))
     if (!best || worth(cut) < worth(best.cut)) best = { skin: way, cut }
   })
   return best!
