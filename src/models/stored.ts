@@ -57,6 +57,8 @@ export const checkedModel = (value: unknown): Solid => {
   const solid = value as unknown as Solid
   const reach = solid.vertices.reduce((most, p) => Math.max(most, norm(p)), 0)
   if (Math.abs(reach - 1) > 1e-6) return refuse(`its size is ${reach}, not 1`)
+  if (modelWithId({ ...solid, id: id.replace(/-[a-z0-9]+$/, '') }).id !== id)
+    return refuse('its shape has been changed')
   const failed = validateSolid(solid).find((c) => !c.ok)
   // A star that was cut into triangles has edges with four faces; the reader has let it pass, and so has the skin's check.
   if (failed && !/two faces/.test(failed.name)) return refuse(`${failed.name}: ${failed.detail}`)

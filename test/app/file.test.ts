@@ -1,7 +1,15 @@
 import { describe, expect, test } from 'vitest'
-import { newBuild } from '../../src/app/state/build'
+import { choose, newBuild } from '../../src/app/state/build'
 import { firstChoices } from '../../src/app/state/choices'
-import { buildFileText, choicesOfPlan, fileNameOf, readFileText } from '../../src/app/storage/file'
+import {
+  buildFileText,
+  checkSavedFileSize,
+  choicesOfPlan,
+  fileNameOf,
+  greatestSavedBytes,
+  readFileText,
+  solidsNeeded,
+} from '../../src/app/storage/file'
 import { InputError } from '../../src/errors'
 import { cubePlan } from '../plan/by-hand'
 
@@ -60,6 +68,23 @@ describe('files', () => {
     }
     const opened = readFileText('b.json', await buildFileText(build, async () => null))
     expect(opened).toMatchObject({ kind: 'build', plans: {} })
+  })
+
+  test('a file of gigabytes is refused by its size, with name and remedy', () => {
+    expect(() => checkSavedFileSize(2 ** 31, 'huge.json')).toThrow(/^huge\.json has 2147 MB.*Open a plan\.json/)
+    checkSavedFileSize(greatestSavedBytes, 'large.json')
+  })
+
+  test('a build needs the solid that is chosen now and those of its plans, but no model that only a plan is of', () => {
+    const build = choose(newBuild('b', firstChoices('own-gone-1'), 1), { solid: 'octahedron' })
+    const planOf = (id: string) => ({ ...plan, model: { ...plan.model, id } })
+    const plans = { k: planOf('snub-cube'), l: planOf('own-gone-1') }
+    expect(solidsNeeded({ kind: 'build', build, plans })).toEqual(['octahedron', 'snub-cube'])
+    const chosen = choose(build, { solid: 'own-gone-1' })
+    expect(solidsNeeded({ kind: 'build', build: chosen, plans: {} })).toEqual(['own-gone-1'])
+    expect(solidsNeeded({ kind: 'plan', plan: planOf('own-gone-1'), choices: firstChoices('cube') })).toEqual([
+      'own-gone-1',
+    ])
   })
 
   test('names of files hold letters, digits and hyphens', () => {

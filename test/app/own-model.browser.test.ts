@@ -67,6 +67,32 @@ test('picked, sized by its unit, planned, still there after a reload, and saved 
   await context.close()
 
   const other = await openApp(browser, app.url, 'no-3d')
+  // Without the model, with another shape in its place, far too large: refused, and nothing is opened by half.
+  const changed = (change: (file: { build: { model?: { vertices: number[][] } }; plans: object }) => void): string => {
+    const file = JSON.parse(text)
+    change(file)
+    return JSON.stringify(file)
+  }
+  const bare = changed((file) => {
+    delete file.build.model
+    file.plans = {}
+  })
+  const turned = changed(({ build: { model } }) => {
+    for (const p of model!.vertices) p.push(p.shift()!)
+  })
+  for (const [name, content, why] of [
+    ['bare.json', bare, /bare\.json is about a model from a file and does not hold the model/],
+    ['turned.json', turned, /turned\.json: .*its shape has been changed/],
+  ] as const) {
+    await drop(other.page, name, content)
+    await other.page.getByRole('alert').filter({ hasText: why }).waitFor()
+  }
+  await dropHuge(other.page, 'huge.json')
+  await other.page
+    .getByRole('alert')
+    .filter({ hasText: /huge\.json has 2147 MB/ })
+    .waitFor()
+  expect(await other.page.locator('.build-name').textContent()).toMatch(/great.icosahedron/)
   await drop(other.page, 'saved-build.json', text)
   await other.page.locator('.build-name', { hasText: 'roof' }).waitFor()
   await goTo(other.page, 'Board')
@@ -90,6 +116,18 @@ const drop = async (page: Page, name: string, text: string): Promise<void> => {
     [name, text] as const,
   )
 }
+
+/** Drops a file of two gigabytes, which complains when it is read: it must be refused by its size. */
+const dropHuge = (page: Page, name: string): Promise<void> =>
+  page.evaluate((fileName) => {
+    const huge = new File(['v 0 0 0'], fileName)
+    Object.defineProperty(huge, 'size', { value: 2 ** 31 })
+    for (const way of ['arrayBuffer', 'text'])
+      Object.defineProperty(huge, way, { value: () => Promise.reject(new Error('read all the same')) })
+    const event = new Event('drop', { bubbles: true, cancelable: true })
+    Object.defineProperty(event, 'dataTransfer', { value: { types: ['Files'], files: [huge] } })
+    document.querySelector('main')!.dispatchEvent(event)
+  }, name)
 
 test('what is wrong with a file is said with its place, and nothing is lost', async () => {
   const { context, page, complaints } = await openApp(browser, app.url, 'no-3d')
@@ -129,20 +167,7 @@ test('what is wrong with a file is said with its place, and nothing is lost', as
   await page.keyboard.press('Escape')
   await dialog.waitFor({ state: 'detached' })
 
-  // A file that is refused by its size is never read.
-  await page.evaluate(() => {
-    const huge = new File(['v 0 0 0'], 'huge.stl')
-    Object.defineProperty(huge, 'size', { value: 2 ** 31 })
-    Object.defineProperty(huge, 'arrayBuffer', {
-      value: () => {
-        throw new Error('read all the same')
-      },
-    })
-    const data = { types: ['Files'], files: [huge] }
-    const event = new Event('drop', { bubbles: true, cancelable: true })
-    Object.defineProperty(event, 'dataTransfer', { value: data })
-    document.querySelector('main')!.dispatchEvent(event)
-  })
+  await dropHuge(page, 'huge.stl')
   const size = await dialog.getByRole('alert').textContent()
   expect(size).toContain('huge.stl')
   expect(size).not.toContain('read all the same')

@@ -7,6 +7,7 @@ import { openStore } from '../../src/app/storage/database'
 import { createKeeper } from '../../src/app/storage/keeper'
 import { mergeBuilds } from '../../src/app/storage/merge'
 import { StorageFailed, type Store } from '../../src/app/storage/types'
+import { buildSolid, type Solid } from '../../src/solids'
 import { planFor } from './plans'
 
 let count = 0
@@ -75,6 +76,20 @@ describe('merging', () => {
     expect(choicesOf(merged)).toEqual({ ...cube, paper: 'letter' })
     expect(merged.history.past.at(-1)?.choices).toEqual({ ...cube, heightMm: 100 })
     expect(merged.revision).toBe(4)
+  })
+
+  test('a model that the other tab brought stays with the build, so that undo finds it', () => {
+    const model = { ...buildSolid('cube'), id: 'own-box-1', name: 'box' }
+    const taken = (which: Solid): Build => ({ ...choose(base(), { solid: which.id }), model: which })
+    const merged = mergeBuilds(taken(model), choose(base(), { heightMm: 100 }))
+    expect(merged.model).toEqual(model)
+    expect(merged.history.past.at(-1)?.choices.solid).toBe(model.id)
+    expect(choicesOf(merged)).toEqual({ ...cube, heightMm: 100 })
+    // Both brought one: ours is kept, and nothing leads back to the other.
+    const ours = taken({ ...model, id: 'own-crate-1' })
+    const both = mergeBuilds(taken(model), ours)
+    expect(both.model?.id).toBe('own-crate-1')
+    expect(both.history.past.map(({ choices }) => choices.solid)).not.toContain(model.id)
   })
 
   test('no job is lost, whoever began it', () => {

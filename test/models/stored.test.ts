@@ -1,5 +1,6 @@
 /** Models that come back from a store or a saved file, where anything may have happened to them. */
 import { describe, expect, test } from 'vitest'
+import type { Vec3 } from '../../src/geometry/vec3'
 import { readModel } from '../../src/models'
 import { checkedModel, modelFacts, modelWithId } from '../../src/models/stored'
 import type { Solid } from '../../src/solids'
@@ -20,6 +21,11 @@ test('what was kept comes back as it was', () => {
     faces: 6,
     components: 1,
   })
+})
+
+test('minus zero, which a saved file turns into zero, is the same shape', () => {
+  const at = (height: number): Solid => ({ ...cube, vertices: cube.vertices.map(([x, y]): Vec3 => [x, y, height]) })
+  expect(modelWithId(at(-0)).id).toBe(modelWithId(at(0)).id)
 })
 
 test('the id belongs to name and shape', () => {
@@ -49,6 +55,10 @@ describe('damage is refused with what it is', () => {
     'components of other faces': [(m) => void (m.components = [0]), /components/],
     'another size': [(m) => void (m.vertices = m.vertices.map((p) => p.map((x) => 2 * Number(x)))), /size/],
     'a corner moved': [(m) => void (m.vertices[0]![0] = Number(m.vertices[0]![0]) * 0.9), /./],
+    'another shape under the same name': [
+      (m) => void (m.vertices = m.vertices.map(([x, y, z]) => [y, z, x])),
+      /shape has been changed/,
+    ],
     'a face left out': [(m) => void m.faces.pop(), /./],
   }
   test.each(Object.entries(damage))('%s', (_, [break_, why]) => {

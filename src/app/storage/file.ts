@@ -4,8 +4,10 @@
  */
 import { InputError } from '../../errors'
 import type { Plan, PlanChoices } from '../../plan/types'
-import { type Build, planKeysOf } from '../state/build'
+import { type Build, choicesOf, planKeysOf } from '../state/build'
 import { firstChoices, limits } from '../state/choices'
+
+const remedy = 'Open a plan.json or a build file that this program has saved.'
 
 interface BuildFile {
   readonly format: 'facetwright-build'
@@ -16,6 +18,22 @@ interface BuildFile {
 export type Opened =
   | { readonly kind: 'plan'; readonly plan: Plan; readonly choices: PlanChoices }
   | { readonly kind: 'build'; readonly build: Build; readonly plans: Readonly<Record<string, Plan>> }
+
+/** A text of more than about 500 MB is more than a browser can hold; the largest plan of all has a tenth of that. */
+export const greatestSavedBytes = 400_000_000
+
+/**
+ * Call it before a saved file is read into memory.
+ * @param size in bytes
+ * @throws InputError for a larger file than `greatestSavedBytes`
+ */
+export const checkSavedFileSize = (size: number, name: string): void => {
+  if (size > greatestSavedBytes)
+    throw new InputError(
+      `${name} has ${Math.round(size / 1e6)} MB, a plan or a build has at most ${greatestSavedBytes / 1e6} MB. ${remedy}`,
+      name,
+    )
+}
 
 /** @param planOf finds a plan by key; a plan that is gone is left out */
 export const buildFileText = async (build: Build, planOf: (key: string) => Promise<Plan | null>): Promise<string> => {
@@ -99,7 +117,6 @@ const isBuild = (value: unknown): value is Build => {
  * @throws InputError naming the file and what to do
  */
 export const readFileText = (name: string, text: string): Opened => {
-  const remedy = 'Open a plan.json or a build file that this program has saved.'
   let value: unknown
   try {
     value = JSON.parse(text)
@@ -120,6 +137,16 @@ export const readFileText = (name: string, text: string): Opened => {
     `${name} is a ${format === 'facetwright-plan' ? 'plan' : 'build'} with parts missing. ${remedy}`,
     name,
   )
+}
+
+/**
+ * Ids of the solids without which a file is of no use: what the builder has chosen now, and what the plans are of. A plan of
+ * a model that the build no longer holds is left out: it can still be glued.
+ */
+export const solidsNeeded = (opened: Opened): string[] => {
+  if (opened.kind === 'plan') return [opened.plan.model.id]
+  const planned = Object.values(opened.plans).map(({ model }) => model.id)
+  return [...new Set([choicesOf(opened.build).solid, ...planned.filter((id) => !id.startsWith('own-'))])]
 }
 
 /** A file name from a build's name: letters, digits and hyphens. */

@@ -9,10 +9,19 @@ const mergeJobs = (theirs: Job, ours: Job): Job => ({
   changed: Math.max(theirs.changed, ours.changed),
 })
 
-/** Our past, then whatever of theirs is not in it, so that undo reaches everything. */
-const mergeHistories = (theirs: Build['history'], ours: Build['history']): Build['history'] => {
+/**
+ * Our past, then whatever of theirs is not in it, so that undo reaches everything.
+ * @param lost id of a model that the merged build will not hold: nothing of it can be reached
+ */
+const mergeHistories = (
+  theirs: Build['history'],
+  ours: Build['history'],
+  lost: string | undefined,
+): Build['history'] => {
   const known = new Set([...ours.past, ours.now].map((design) => JSON.stringify(design)))
-  const missing = [...theirs.past, theirs.now].filter((design) => !known.has(JSON.stringify(design)))
+  const missing = [...theirs.past, theirs.now].filter(
+    (design) => !known.has(JSON.stringify(design)) && design.choices.solid !== lost,
+  )
   return missing.length === 0 ? ours : { ...ours, past: [...ours.past, ...missing] }
 }
 
@@ -26,9 +35,13 @@ export const mergeBuilds = (theirs: Build, ours: Build): Build => {
     const other = theirs.jobs.find(({ id }) => id === job.id)
     return other ? mergeJobs(other, job) : job
   })
+  const model = ours.model ?? theirs.model
+  // A build holds one model. Two tabs that took different ones keep ours.
+  const lost = theirs.model?.id === model?.id ? undefined : theirs.model?.id
   return {
     ...ours,
-    history: mergeHistories(theirs.history, ours.history),
+    ...(model ? { model } : {}),
+    history: mergeHistories(theirs.history, ours.history, lost),
     jobs: [...jobs, ...theirs.jobs.filter(({ id }) => !ours.jobs.some((job) => job.id === id))],
     job: ours.job ?? theirs.job,
     changed: Math.max(theirs.changed, ours.changed),

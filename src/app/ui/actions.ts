@@ -1,7 +1,7 @@
 /** What several stations do in the same way. */
 import { InputError } from '../../errors'
 import type { Planned } from '../state/workshop'
-import { buildFileText, fileNameOf, readFileText } from '../storage/file'
+import { buildFileText, checkSavedFileSize, fileNameOf, readFileText, solidsNeeded } from '../storage/file'
 import type { AppContext } from './context'
 import { download } from './download'
 
@@ -26,22 +26,26 @@ export const saveBuildFile = async (app: AppContext): Promise<void> => {
 /** Opens a plan or build file as a build of its own; what is open now stays in the list of builds. */
 export const openFile = async (app: AppContext, file: File): Promise<boolean> => {
   try {
+    checkSavedFileSize(file.size, file.name)
     const opened = readFileText(file.name, await file.text())
     const plans = opened.kind === 'plan' ? [opened.plan] : Object.values(opened.plans)
     const model = opened.kind === 'build' ? opened.build.model : undefined
+    // The solids first, so that a file that is refused leaves nothing behind.
+    for (const id of solidsNeeded(opened)) {
+      const known = await app.press.knows(id)
+      if (!known.ok || known.value || id === model?.id) continue
+      throw new InputError(
+        id.startsWith('own-')
+          ? `${file.name} is about a model from a file and does not hold the model. Open the model itself, or a build file.`
+          : `${file.name} is about a solid that this program does not know: ${id}.`,
+        file.name,
+      )
+    }
     if (model) {
       const kept = await app.press.keepModel(model)
       if (!kept.ok) throw new InputError(`${file.name}: ${kept.refusal.message}`, file.name)
     }
     for (const plan of plans) {
-      const known = await app.press.knows(plan.model.id)
-      if (known.ok && !known.value && plan.model.id !== model?.id)
-        throw new InputError(
-          plan.model.id.startsWith('own-')
-            ? `${file.name} is the plan of a model from a file, and does not hold the model. Open the model, or the build file.`
-            : `${file.name} is of a solid that this program does not know: ${plan.model.id}.`,
-          file.name,
-        )
       const answer = await app.press.check(plan)
       if (!answer.ok) throw new InputError(`${file.name} cannot be used: ${answer.refusal.message}`, file.name)
       const failed = answer.value.filter(({ ok }) => !ok)
